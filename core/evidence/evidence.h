@@ -72,4 +72,21 @@ struct Evidence {
   Interval f() const { return {wald.low / df.numerator, wald.high / df.numerator}; }
 };
 
+// Printed figures that no one table can show together, the smallest set found.
+struct Clash {
+  std::string where;  // "full / r2, adj_r2"
+  std::string says;
+  std::vector<Cell> cells;
+};
+
+// What a route answers. No evidence where it does not apply; `cautions` then say why where a reader might expect it,
+// and `refused` that the claim itself rests on a comparison that cannot be made.
+struct RouteAnswer {
+  std::optional<Evidence> evidence;
+  std::vector<std::string> cautions;
+  std::vector<Clash> clashes;
+  std::vector<Ask> asks;
+  std::string refused;
+};
+
 }  // namespace rejoinder
