@@ -15,7 +15,7 @@ std::vector<std::string> slope_names(const Column& column) {
     if (!term.intercept) names.push_back(term.name);
   // "all" means every slope, those too that the column does not list: nothing is known about them.
   for (long i = static_cast<long>(names.size()); column.k && i < *column.k; ++i)
-    names.push_back("slope not listed " + std::to_string(i + 1 - static_cast<long>(column.terms.size())));
+    names.push_back("slope " + std::to_string(i + 1) + ", not listed");
   return names;
 }
 
@@ -244,9 +244,13 @@ std::variant<JointTest, NoTest> set_up_test(const Review& review, const Claim& c
 
   test.statistic = statistic_of(column, claim);
   test.df_argument = test_df(column);
-  if (column.estimator == Estimator::Iv || column.estimator == Estimator::Other) {
-    if (test.statistic == Statistic::F && !column.df && !test.df_argument.known && claim.df2)
-      test.df_argument.denominator = *claim.df2;
+  // Where the column leaves the df open, those of the sentence are the best to be had (clusters are another matter: their
+  // count cannot be argued from the sentence).
+  if (test.statistic == Statistic::F && !test.df_argument.known && claim.df2 && column.errors != Errors::Clustered) {
+    test.df_argument.denominator = *claim.df2;
+    test.df_argument.words = "as the sentence reports them: " + df_text(*claim.df2);
+    test.df_argument.cautions.clear();
+    test.assumes.push_back("the denominator df that the sentence reports");
   }
   test.df = {test.q, test.statistic == Statistic::F ? test.df_argument.denominator : kInfinity};
   test.cautions.insert(test.cautions.end(), test.df_argument.cautions.begin(), test.df_argument.cautions.end());
