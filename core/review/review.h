@@ -1,7 +1,7 @@
 // A review: what one paper prints and what it claims, each number with the text as printed.
 //
-// The plain data that every route reads. Made by read_review from a Document; nothing here is computed, nothing is
-// guessed: what the print does not give is absent.
+// The plain data that every route reads. Made by read_review from a Document; nothing here is computed,
+// nothing is guessed: what the print does not give is absent.
 #pragma once
 
 #include <array>
@@ -31,8 +31,9 @@ struct Uncertainty {
 struct Term : Uncertainty {
   std::string name;
   Printed coef;
-  Printed ratio;             // odds, rate or hazard ratio, in place of coef; ci is then of the ratio too
-  std::optional<int> stars;  // by the key, or glued to coef or ratio; absent: not known (0 says none was printed)
+  Printed ratio;  // odds, rate or hazard ratio, in place of coef; ci is then of the ratio too
+  std::optional<int>
+      stars;  // by the key, or glued to coef or ratio; absent: not known (0 says none was printed)
   bool intercept = false;
   Place place;
   // A name alone: nothing is known but that the term was there.
@@ -41,8 +42,8 @@ struct Term : Uncertainty {
 
 // A lower triangle, row i holding i + 1 cells; an empty cell is not known.
 struct PrintedMatrix {
-  std::vector<std::string> terms;            // p
-  std::vector<std::vector<Printed>> lower;   // p rows
+  std::vector<std::string> terms;           // p
+  std::vector<std::vector<Printed>> lower;  // p rows
   Place place;
 };
 
@@ -116,24 +117,24 @@ struct Fit {
 
 struct Claim {
   std::string id, says, page, note;
-  std::string column;                 // id; empty where the claim needs none
-  std::string restrictions;           // empty where two columns are compared
-  std::string restricted;             // id of the nested column
+  std::string column;        // id; empty where the claim needs none
+  std::string restrictions;  // empty where two columns are compared
+  std::string restricted;    // id of the nested column
   std::optional<Fit> restricted_fit;
-  std::vector<std::string> columns;   // ids, for claims over several columns
+  std::vector<std::string> columns;  // ids, for claims over several columns
   Samples samples = Samples::Independent;
-  std::string source;                 // line of the analysis-of-variance table
-  std::string pooled;                 // break test: id of the pooled column
-  std::vector<std::string> parts;     // and of its parts
-  std::string outcome;                // claims on the table of correlations
+  std::string source;              // line of the analysis-of-variance table
+  std::string pooled;              // break test: id of the pooled column
+  std::vector<std::string> parts;  // and of its parts
+  std::string outcome;             // claims on the table of correlations
   std::vector<std::string> regressors;
   // What is reported.
   Printed f, chi2, p;
   std::optional<long> df1;
-  std::optional<double> df2;          // may be infinite
+  std::optional<double> df2;  // may be infinite
   std::optional<bool> rejects;
   std::optional<int> stars;
-  std::optional<double> level;        // absent: the review's
+  std::optional<double> level;  // absent: the review's
   int sided = 2;
   Place place;
 };
@@ -141,7 +142,7 @@ struct Claim {
 // Something in the file that could not be read. The rest is checked all the same.
 struct Problem {
   int line = 0;
-  std::string key;    // "claim \"prices\" / restrictions"
+  std::string key;  // "claim \"prices\" / restrictions"
   std::string what, mend;
   std::string claim;  // id, where it concerns one claim only, so that its finding can say so
   std::string text() const;
@@ -163,8 +164,8 @@ struct Review {
   const Column* column(std::string_view id) const;
 };
 
-// Reads what the tree says. Never refuses a whole review for one bad value: each value that cannot be read is left
-// out and listed under problems with its line, key, what it is and how to mend it.
+// Reads what the tree says. Never refuses a whole review for one bad value: each value that cannot be read is
+// left out and listed under problems with its line, key, what it is and how to mend it.
 Review read_review(const Node& document);
 
 }  // namespace rejoinder
