@@ -143,8 +143,7 @@ std::string joined(const std::vector<std::string>& words) {
 }
 
 CoefficientLimits limits(const Review& review, const Column& column, const std::string& name, const Reading& printed,
-                         double df, bool use_stars) {
-  const bool normal_too = column.errors == Errors::Robust || column.errors == Errors::Clustered;
+                         double df, bool use_stars, bool normal_too) {
   CoefficientLimits out;
   Figures f;
   Interval size_of_t{0, kInfinity};
@@ -229,15 +228,28 @@ CoefficientLimits limits(const Review& review, const Column& column, const std::
   return out;
 }
 
-CoefficientLimits with_or_without_stars(const Review& review, const Column& column, const std::string& name,
-                                        const Reading& printed, double df) {
-  CoefficientLimits all = limits(review, column, name, printed, df, true);
-  if (all.consistent || !printed.stars) return all;
-  CoefficientLimits rest = limits(review, column, name, printed, df, false);
-  if (!rest.consistent || !rest.known) return rest.known ? rest : all;
-  rest.without_stars = true;
-  rest.clashes = all.clashes;
-  return rest;
+// The strict reading first; where its figures do not go together, the innocent conventions that a paper may have used without
+// saying so: p and intervals by the normal, then stars of another kind.
+CoefficientLimits best_reading(const Review& review, const Column& column, const std::string& name, const Reading& printed,
+                               double df) {
+  const bool robust = column.errors == Errors::Robust || column.errors == Errors::Clustered;
+  const CoefficientLimits strict = limits(review, column, name, printed, df, true, robust);
+  if (strict.consistent) return strict;
+  const CoefficientLimits normal = limits(review, column, name, printed, df, true, true);
+  if (normal.consistent) return normal;
+  if (!printed.stars) return strict;
+  for (const bool normal_too : {robust, true}) {
+    CoefficientLimits rest = limits(review, column, name, printed, df, false, normal_too);
+    if (!rest.known || !rest.consistent) continue;
+    rest.without_stars = true;
+    rest.clashes = strict.clashes;
+    for (Clash& clash : rest.clashes) {
+      clash.mild = true;
+      clash.says += " Without the stars they do; stars may follow another convention, one-sided for example.";
+    }
+    return rest;
+  }
+  return strict;
 }
 
 }  // namespace
@@ -259,12 +271,12 @@ Interval CoefficientLimits::t_about(double r) const {
 CoefficientLimits coefficient_limits(const Review& review, const Column& column, const Term& term, double denominator_df) {
   Reading printed{term.ratio ? term.ratio : term.coef, term.se, term.t, term.p, term.ci, term.ci_level,
                   term.ratio.has_value(), term.stars};
-  return with_or_without_stars(review, column, term.name, printed, denominator_df);
+  return best_reading(review, column, term.name, printed, denominator_df);
 }
 
 CoefficientLimits combination_limits(const Review& review, const Column& column, const Fact& fact, double denominator_df) {
   Reading printed{fact.value, fact.se, fact.t, fact.p, fact.ci, fact.ci_level, false, std::nullopt};
-  return with_or_without_stars(review, column, fact.of, printed, denominator_df);
+  return best_reading(review, column, fact.of, printed, denominator_df);
 }
 
 }  // namespace rejoinder

@@ -77,6 +77,7 @@ struct Clash {
   std::string where;  // "full / r2, adj_r2"
   std::string says;
   std::vector<Cell> cells;
+  bool mild = false;  // a convention left unsaid (one-sided stars, say) would explain it; nothing rests on it
 };
 
 // What a route answers. No evidence where it does not apply; `cautions` then say why where a reader might expect it,
