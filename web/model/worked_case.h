@@ -1,0 +1,9 @@
+// The review that the page opens with: an invented paper with findings of every kind.
+#pragma once
+
+namespace rejoinder {
+
+// The text of demo/worked case, word for word; a test compares them.
+const char* worked_case();
+
+}  // namespace rejoinder
