@@ -51,37 +51,47 @@ add_custom_command(OUTPUT "${licence_data}"
   DEPENDS "${PROJECT_SOURCE_DIR}/.setup/collect_licences" "${imgui}/LICENSE.txt"
   COMMENT "Collecting the licences" VERBATIM)
 
-# ---- The program inside the page
+# ---- The platform: all that knows the browser
 file(GLOB_RECURSE platform_sources CONFIGURE_DEPENDS web/platform/*.cc)
-# Another app than the workbench, for trying the platform on its own: its source files.
-if(NOT DEFINED REJOINDER_APP_SOURCES)
-  file(GLOB app_sources CONFIGURE_DEPENDS web/*.cc web/panels/*.cc web/pictures/*.cc)
-else()
-  set(app_sources "${REJOINDER_APP_SOURCES}")
-endif()
-if(NOT app_sources)
-  message(STATUS "web/ holds no app yet, so rejoinder.html is left out")
-  return()
-endif()
+# Objects, as a library would leave out what only the page's scripts call.
+add_library(platform OBJECT ${platform_sources} "${font_data}" "${licence_data}")
+target_link_libraries(platform PUBLIC rejoinder_flags imgui)
 
-add_executable(page ${app_sources} ${platform_sources} "${font_data}" "${licence_data}")
-target_link_libraries(page PRIVATE workbench core imgui)
-target_link_options(page PRIVATE
-  -sMIN_WEBGL_VERSION=2 -sMAX_WEBGL_VERSION=2 -sFULL_ES3=0 -sFILESYSTEM=0 -sENVIRONMENT=web -sASSERTIONS=0
-  -sMODULARIZE=1 -sEXPORT_NAME=createRejoinder
-  -sEXPORTED_RUNTIME_METHODS=UTF8ToString,stringToUTF8,lengthBytesUTF8
-  -sEXPORTED_FUNCTIONS=_main,_malloc,_free)
-
-# ---- The file
-# Order matters only in that page.js comes first and start.js last.
+# The scripts are joined in this order: page.js first, start.js last.
 set(scripts)
 foreach(name page sizing pointer keys clipboard files storage companion test_hook start)
   list(APPEND scripts "${PROJECT_SOURCE_DIR}/web/platform/${name}.js")
 endforeach()
-set(packed "${PROJECT_BINARY_DIR}/rejoinder.html")
-add_custom_command(OUTPUT "${packed}"
-  COMMAND "${NODE_PROGRAM}" "${PROJECT_SOURCE_DIR}/web/pack.mjs" "${packed}" "${PROJECT_SOURCE_DIR}/web/page.html"
-          "$<TARGET_FILE:page>" "$<TARGET_FILE_DIR:page>/page.wasm" ${scripts}
-  DEPENDS page "${PROJECT_SOURCE_DIR}/web/pack.mjs" "${PROJECT_SOURCE_DIR}/web/page.html" ${scripts}
-  COMMENT "Packing rejoinder.html" VERBATIM)
-add_custom_target(packed_page ALL DEPENDS "${packed}")
+
+# A page of one file from an app (web/platform/app.h) and the platform.
+function(add_page name file)
+  add_executable(${name} ${ARGN})
+  target_link_libraries(${name} PRIVATE platform)
+  target_link_options(${name} PRIVATE
+    -sMIN_WEBGL_VERSION=2 -sMAX_WEBGL_VERSION=2 -sFULL_ES3=0 -sFILESYSTEM=0 -sENVIRONMENT=web -sASSERTIONS=0
+    -sMODULARIZE=1 -sEXPORT_NAME=createRejoinder
+    -sEXPORTED_RUNTIME_METHODS=UTF8ToString,stringToUTF8,lengthBytesUTF8
+    -sEXPORTED_FUNCTIONS=_main,_malloc,_free)
+  set(packed "${PROJECT_BINARY_DIR}/${file}")
+  set(page_html "${PROJECT_SOURCE_DIR}/web/page.html")
+  add_custom_command(OUTPUT "${packed}"
+    COMMAND "${NODE_PROGRAM}" "${PROJECT_SOURCE_DIR}/web/pack.mjs" "${packed}" "${page_html}"
+            "$<TARGET_FILE:${name}>" "$<TARGET_FILE_DIR:${name}>/${name}.wasm" ${scripts}
+    DEPENDS ${name} "${PROJECT_SOURCE_DIR}/web/pack.mjs" "${page_html}" ${scripts}
+    COMMENT "Packing ${file}" VERBATIM)
+  add_custom_target(pack_${name} ALL DEPENDS "${packed}")
+endfunction()
+
+# ---- rejoinder.html
+file(GLOB app_sources CONFIGURE_DEPENDS web/*.cc web/panels/*.cc web/pictures/*.cc)
+if(app_sources)
+  add_page(page rejoinder.html ${app_sources})
+  target_link_libraries(page PRIVATE workbench core)
+else()
+  message(STATUS "web/ holds no app yet, so rejoinder.html is left out")
+endif()
+
+# ---- platform_trial.html: a few widgets, by which the browser tests try the platform on its own
+if(REJOINDER_TESTS)
+  add_page(platform_trial platform_trial.html tests/browser/platform_trial.cc)
+endif()

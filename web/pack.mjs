@@ -6,6 +6,7 @@
 // file itself forbids every request, and every script but the two whose hashes it names.
 import {createHash} from 'node:crypto';
 import {readFileSync, writeFileSync} from 'node:fs';
+import {basename} from 'node:path';
 import {deflateRawSync, gzipSync} from 'node:zlib';
 
 const [outPath, pagePath, modulePath, wasmPath, ...scriptPaths] = process.argv.slice(2);
@@ -41,5 +42,5 @@ const page = read(pagePath)
 writeFileSync(outPath, page);
 
 const kilobytes = (bytes) => `${Math.round(bytes / 1000)} kB`;
-console.log(`rejoinder.html: ${kilobytes(Buffer.byteLength(page))}, ${kilobytes(gzipSync(page, {level: 9}).length)} when ` +
+console.log(`${basename(outPath)}: ${kilobytes(Buffer.byteLength(page))}, ${kilobytes(gzipSync(page, {level: 9}).length)} when ` +
             `compressed for sending; program ${kilobytes(wasm.length)}`);

@@ -11,6 +11,9 @@ namespace {
 
 constexpr int kFaces = 3, kSizes = 5;
 constexpr float kPixels[kSizes] = {12.5f, 14, 15, 18, 24};
+// Those are sizes of the em, as in print and on web pages. ImGui counts from the highest to the lowest point of the
+// face, which for DejaVu is (1901 + 483) / 2048 em.
+constexpr float kHeightOfEm = 1.164f;
 // Finer than this no eye sees, and the picture of all glyphs would outgrow what graphics cards take.
 constexpr float kGreatestDensity = 4;
 
@@ -76,7 +79,7 @@ bool prepare_fonts(float pixel_ratio, float text_scale) {
       Cut& cut = cuts[face][size];
       cut.font = nullptr;
       if (!cut.wanted) continue;
-      const float pixels = std::round(kPixels[size] * text_scale * density);
+      const float pixels = std::round(kPixels[size] * kHeightOfEm * text_scale * density);
       cut.font =
           io.Fonts->AddFontFromMemoryTTF(const_cast<void*>(data.bytes), data.size, pixels, &config, kRanges);
     }

@@ -1,4 +1,4 @@
-// What browser tests may ask: where widgets stand, how many frames were drawn. Nothing here changes the review.
+// What browser tests may ask: where widgets stand, what was drawn and kept. Nothing here changes the review.
 
 window.rejoinderTest = Object.freeze({
   figures,
@@ -8,6 +8,9 @@ window.rejoinderTest = Object.freeze({
     return JSON.parse(textAt(program._all_marks()));
   },
   frames: () => program._count_frames(),
+  // A hidden page is given no frames, however many it wants.
+  atRest: () => document.hidden || (ready && !frameIsComing),
+  redraw: () => drawNow(),
   slot: () => slot,
   kept: () => shelf.all().then((entries) => entries.get(slot)?.text ?? null),
 });
