@@ -90,6 +90,9 @@ Result<Node> read_document(std::string_view text) {
   if (scan.too_deep)
     return Error{where_of(places.place_of(*scan.too_deep)),
                  "tables, lists or dotted keys stand more than 64 deep", "write the value at a lower depth"};
+  if (scan.no_key)
+    return Error{where_of(places.place_of(*scan.no_key)), "this header cannot be read",
+                 "write [table] or [[list]], names with blanks in double quotes, alone on its line"};
   const toml::parse_result parsed = toml::parse(text);
   if (!parsed) {
     const toml::parse_error& complaint = parsed.error();

@@ -3,6 +3,18 @@
 #include <algorithm>
 
 namespace rejoinder {
+namespace {
+
+// Whether a key, a second bracket or the end of the header follows the bracket at `at`.
+bool begins_header(std::string_view text, std::size_t at) {
+  const std::size_t next = text.find_first_not_of(" \t", at + 1);
+  if (next == std::string_view::npos) return true;
+  const char c = text[next];
+  return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z') || (c >= '0' && c <= '9') || c == '_' || c == '-' ||
+         c == '"' || c == '\'' || c == '[' || c == ']';
+}
+
+}  // namespace
 
 DocumentScan scan_document(std::string_view text, int deepest) {
   struct Level {
@@ -72,6 +84,10 @@ DocumentScan scan_document(std::string_view text, int deepest) {
         break;
       case '[':
         if (levels.size() == 1 && (line_begins || header)) {
+          if (!begins_header(text, i)) {
+            scan.no_key = i;
+            return scan;
+          }
           header = true;
           depth -= header_depth;
           header_depth = 0;

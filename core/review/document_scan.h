@@ -17,6 +17,7 @@ namespace rejoinder {
 
 struct DocumentScan {
   std::optional<std::size_t> too_deep;  // byte where nesting passes the limit
+  std::optional<std::size_t> no_key;    // byte of a header's bracket that no key follows
   std::optional<std::size_t> open;      // byte of the quote or bracket that the end of the file leaves open
 };
 

@@ -32,8 +32,8 @@ struct Term : Uncertainty {
   std::string name;
   Printed coef;
   Printed ratio;  // odds, rate or hazard ratio, in place of coef; ci is then of the ratio too
-  std::optional<int>
-      stars;  // by the key, or glued to coef or ratio; absent: not known (0 says none was printed)
+  // By the key, or glued to a figure of the term; absent: not known (0 says that none was printed).
+  std::optional<int> stars;
   bool intercept = false;
   Place place;
   // A name alone: nothing is known but that the term was there.

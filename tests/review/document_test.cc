@@ -275,6 +275,10 @@ TEST(Document, SaysWhereAndHowToMend) {
        "line 2, column 5: the quote or bracket that opens here is not closed; close it where the value ends"},
       {"a = \"\"\"x\n\n",
        "line 1, column 5: the quote or bracket that opens here is not closed; close it where the value ends"},
+      {"x = 1\n[= 2\n",
+       "line 2, column 1: this header cannot be read; write [table] or [[list]], names with blanks in double "
+       "quotes, "
+       "alone on its line"},
       {"a = \"\\d\"\n",
        "line 1, column 7: a backslash in a quoted text begins an unknown sign; write a backslash twice: "
        "\\\\"},
