@@ -28,8 +28,8 @@ struct Fraction {
   double alpha(double n) const {
     if (std::isinf(a)) return n * (b - n);
     const double step = a + 2 * n - 1;
-    if (std::isinf(b)) return (a + n - 1) * n * (scaled / step) * (scaled / step);
-    return ((a + n - 1) / step) * ((a + b + n - 1) * x) * (n * (b - n) * x / step);
+    if (std::isinf(b)) return (a + (n - 1)) * n * (scaled / step) * (scaled / step);
+    return ((a + (n - 1)) / step) * ((a + b + (n - 1)) * x) * (n * (b - n) * x / step);
   }
   double beta(double n) const {
     if (n == 0) return std::isinf(a) ? lambda + 1 : a / (a + 1) * (lambda + 1);
