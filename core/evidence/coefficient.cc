@@ -40,8 +40,8 @@ Interval p_of_stars(const Review& review, int count) {
 
 bool narrow(Interval& target, const Interval& by) {
   // Half a unit of rounding decides ties, so ends that touch within floating point noise still meet.
-  const double noise = 1e-12 * std::min(by.magnitude(), 1e300);
-  const std::optional<Interval> both = meet(target, {by.low - noise, by.high + noise});
+  const auto noise = [](double x) { return std::isinf(x) ? 0.0 : 1e-12 * std::fabs(x); };
+  const std::optional<Interval> both = meet(target, {by.low - noise(by.low), by.high + noise(by.high)});
   if (!both) return false;
   target = *both;
   return true;

@@ -226,7 +226,7 @@ RouteAnswer fit_evidence(const JointTest& test) {
   if (against_nothing) {
     graph.add({kTotal, kShort, Interval::point(0), "", {}});
   }
-  if (test.restricted && !against_nothing) {
+  if (test.restricted) {
     facts.of(model_of(*test.restricted, kShort));
   } else if (test.restricted_fit) {
     facts.of(model_of(*test.restricted_fit, column, test.q));

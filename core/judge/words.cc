@@ -147,11 +147,11 @@ std::string end_stop(std::string text) {
   return text;
 }
 
-std::string claimed_words(const Claim& claim) {
+std::string claimed_words(const Finding& finding, const Claim& claim) {
   const std::string place = claim.page.empty() ? "" : " (" + claim.page + ")";
   if (!claim.says.empty()) return "The paper states" + place + ": “" + claim.says + "”";
   const std::string figures = reported_text(claim);
-  return "The paper reports" + place + " for “" + claim.restrictions + "”" + (figures.empty() ? " a decision." : ": " + figures + ".");
+  return "The paper reports" + place + " for “" + finding.restrictions + "”" + (figures.empty() ? " a decision." : ": " + figures + ".");
 }
 
 std::string question(const Finding& finding, const Claim& claim) {
@@ -173,14 +173,14 @@ std::string question(const Finding& finding, const Claim& claim) {
 
 // Four sentences in fixed order: claimed, used, allowed, asked.
 std::string paragraph_words(const Finding& finding, const Claim& claim, const JointTest* test, const std::string& reason) {
-  std::vector<std::string> parts = {claimed_words(claim)};
+  std::vector<std::string> parts = {claimed_words(finding, claim)};
   if (finding.f) {
     parts.push_back("I used " + used_words(finding, test) + ".");
     std::string allows = "From these, allowing for rounding, " + between(shown(finding), test_name(finding)) + ", so " + p_between(*finding.p) +
                          "; the " + level_text(finding.level) + " point is " + number_text(*finding.critical) + ".";
     parts.push_back(allows);
     if (finding.state == State::Agrees) parts.push_back("This agrees with the statement, as far as the printed figures can show.");
-    if (finding.state == State::Undecided) parts.push_back("The printed figures can neither confirm nor contradict the statement.");
+    if (finding.state == State::Undecided) parts.push_back("The printed figures can neither confirm the statement nor rule it out.");
     if (finding.state == State::Conflicts) {
       parts.push_back("The statement does not match this.");
       if (!finding.assumes.empty()) {
