@@ -30,6 +30,13 @@ class Reader {
       if (take(text)) return true;
     return false;
   }
+  // Digits alone.
+  std::string whole() {
+    skip_blanks();
+    const int from = at_;
+    while (at_ < held_->size() && is_digit(held_->plain[at_])) ++at_;
+    return held_->plain.substr(from, at_ - from);
+  }
   // A figure as printed. A comma inside counts where digits in threes follow it, so that "2, 410" stays two.
   std::string figure() {
     skip_blanks();
@@ -81,7 +88,7 @@ Degrees degrees_in_brackets(Reader& reader) {
   Degrees df;
   if (!ahead.take_any({"(", "["})) return df;
   ahead.take_any({"df =", "df="});
-  df.df1 = without_commas(ahead.figure());
+  df.df1 = ahead.whole();  // a comma after it parts the two, as in (2,410)
   if (df.df1.empty()) return {};
   if (ahead.take_any({",", ";"})) {
     if (ahead.take("n")) {  // the number of observations beside a chi-square's df

@@ -66,6 +66,13 @@ void open_worked_case(AppState& state) {
   state.document = worked.ok() ? std::move(worked).value() : Node::table(false);
 }
 
+// The worked case opens at a claim that does not match, where there is most to see.
+void choose_first_conflict(AppState& state) {
+  const auto& findings = state.checked.findings;
+  for (std::size_t i = findings.size(); i-- > 0;)
+    if (findings[i].state == State::Conflicts) state.claim = static_cast<int>(i);
+}
+
 // The view's choices. A value that cannot be read leaves the usual one.
 void read_view(AppState& state, const Node& stored) {
   if (review_text(stored, "theme") == "dark") state.theme = Theme::Dark;
@@ -118,6 +125,7 @@ AppState first_state(const std::string& text) {
     open_worked_case(state);
     state.notice = "a worked case, invented; paste a table or open a review to begin";
     derive(state);
+    choose_first_conflict(state);
     return state;
   }
   const Result<Node> stored = read_document(text);

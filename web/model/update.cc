@@ -209,8 +209,10 @@ class Updater {
   bool paste_into_cells(const std::string& text) {
     std::vector<std::vector<std::string>> block = read_block(text);
     if (block.empty()) {
-      if (text.find('\n') != std::string::npos || text.size() > 40) return false;
-      block = {{text}};
+      const std::size_t first = text.find_first_not_of(" \n\t"), last = text.find_last_not_of(" \n\t");
+      const std::string figure = text.substr(first, last - first + 1);
+      if (figure.find('\n') != std::string::npos || figure.size() > 40) return false;
+      block = {{figure}};
     }
     for (const std::vector<std::string>& row : block)
       for (const std::string& cell : row)

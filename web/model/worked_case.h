@@ -3,7 +3,7 @@
 
 namespace rejoinder {
 
-// The text of demo/worked case, word for word; a test compares them.
+// The text of demo/mountain-huts.toml, byte for byte; a test compares them.
 const char* worked_case();
 
 }  // namespace rejoinder
