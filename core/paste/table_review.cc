@@ -64,7 +64,8 @@ std::string column_id(const std::string& heading, std::size_t index, std::set<st
 
 std::string whole_number(const std::string& text, char decimal) {
   std::string digits;
-  for (const char c : plain_lines(text).front().plain) {
+  const PlainLine line = plain_lines(text).front();
+  for (const char c : line.plain) {
     if (c >= '0' && c <= '9')
       digits += c;
     else if (c == decimal)

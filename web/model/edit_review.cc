@@ -106,7 +106,7 @@ std::string at(std::string_view what, int index, const std::string& key) {
 
 }  // namespace
 
-Change apply(Node& document, const EditCell& intent) {
+Change carry_out(Node& document, const EditCell& intent) {
   const TableCell& cell = intent.cell;
   const Node* column = row_of(document, "column", cell.column);
   if (!column || (cell.term >= 0 && !row_of(*column, "term", cell.term))) return {};
@@ -117,7 +117,7 @@ Change apply(Node& document, const EditCell& intent) {
   return {at("column", cell.column, at("term", cell.term, cell.key)), "", std::nullopt};
 }
 
-Change apply(Node& document, const RenameTerm& intent) {
+Change carry_out(Node& document, const RenameTerm& intent) {
   const std::string from = cell_text(document, {intent.column, intent.term, "name"});
   const std::string to = clean_text(intent.name, false);
   const Node* column = row_of(document, "column", intent.column);
@@ -139,7 +139,7 @@ Change apply(Node& document, const RenameTerm& intent) {
   return {edit, "", std::nullopt};
 }
 
-Change apply(Node& document, const AddTerm& intent) {
+Change carry_out(Node& document, const AddTerm& intent) {
   const std::string name = clean_text(intent.name, false);
   if (trimmed_text(name).empty()) return {"", "a term needs a name", std::nullopt};
   if (count_of(document, "column") == 0) new_column(document);
@@ -150,13 +150,13 @@ Change apply(Node& document, const AddTerm& intent) {
   return {};
 }
 
-Change apply(Node& document, const RemoveTerm& intent) {
+Change carry_out(Node& document, const RemoveTerm& intent) {
   for (int c = 0; c < count_of(document, "column"); ++c)
     if (const int term = term_index(document, c, intent.name); term >= 0) remove_term(document, c, term);
   return {"", "\"" + intent.name + "\" taken out of the table", std::nullopt};
 }
 
-Change apply(Node& document, const AddColumn&) {
+Change carry_out(Node& document, const AddColumn&) {
   const int last = count_of(document, "column") - 1;
   const int column = new_column(document);
   // The same terms, in the same order, with nothing known of them but their names.
@@ -164,13 +164,13 @@ Change apply(Node& document, const AddColumn&) {
   return {};
 }
 
-Change apply(Node& document, const RemoveColumn& intent) {
+Change carry_out(Node& document, const RemoveColumn& intent) {
   const std::string label = column_text(document, intent.column, "label");
   if (!remove_column(document, intent.column)) return {};
   return {"", "column " + label + " taken out", std::nullopt};
 }
 
-Change apply(Node& document, const EditColumn& intent) {
+Change carry_out(Node& document, const EditColumn& intent) {
   if (!row_of(document, "column", intent.column)) return {};
   const std::string text = clean_text(intent.text, false);
   if (intent.key == "id") {
@@ -183,7 +183,7 @@ Change apply(Node& document, const EditColumn& intent) {
   return {at("column", intent.column, intent.key), "", std::nullopt};
 }
 
-Change apply(Node& document, const EditReview& intent) {
+Change carry_out(Node& document, const EditReview& intent) {
   const std::string text = clean_text(intent.text, intent.key == "note");
   put(document, {{intent.key}}, intent.key == "stars" ? Field::Names : Field::Scalar, text);
   return {"review / " + intent.key, "", std::nullopt};
@@ -198,7 +198,7 @@ Change put_claim(Node& document, const Node& claim, const std::string& column) {
   return {"", "", index};
 }
 
-Change apply(Node& document, const EditClaim& intent) {
+Change carry_out(Node& document, const EditClaim& intent) {
   if (!row_of(document, "claim", intent.claim)) return {};
   const std::string text = clean_text(intent.text, intent.key == "says" || intent.key == "note");
   if (intent.key == "id") {
@@ -220,7 +220,7 @@ Change apply(Node& document, const EditClaim& intent) {
   return {at("claim", intent.claim, intent.key), "", std::nullopt};
 }
 
-Change apply(Node& document, const TickTerms& intent) {
+Change carry_out(Node& document, const TickTerms& intent) {
   if (!row_of(document, "claim", intent.claim)) return {};
   Ticks ticks = read_ticks(claim_text(document, intent.claim, "restrictions"));
   if (intent.form != "sum" || ticks.form != "sum") ticks.value = "1";
@@ -230,30 +230,30 @@ Change apply(Node& document, const TickTerms& intent) {
   return {};
 }
 
-Change apply(Node& document, const RemoveClaim& intent) {
+Change carry_out(Node& document, const RemoveClaim& intent) {
   if (!remove_claim(document, intent.claim)) return {};
   return {"", "claim taken out", std::max(0, std::min(intent.claim, count_of(document, "claim") - 1))};
 }
 
-Change apply(Node& document, const DuplicateClaim& intent) {
+Change carry_out(Node& document, const DuplicateClaim& intent) {
   const int copy = duplicate_claim(document, intent.claim);
   if (copy < 0) return {};
   return {"", "claim repeated below", copy};
 }
 
-Change apply(Node& document, const MoveClaim& intent) {
+Change carry_out(Node& document, const MoveClaim& intent) {
   const int to = intent.claim + intent.by;
   if (!move_claim(document, intent.claim, to)) return {};
   return {"", "", to};
 }
 
-Change apply(Node& document, const NewReview&) {
+Change carry_out(Node& document, const NewReview&) {
   document = empty_review("Untitled review");
   new_column(document);
   return {"", "an empty review; undo brings the other one back", -1};
 }
 
-Change apply(Node& document, const FiveFigures& intent) {
+Change carry_out(Node& document, const FiveFigures& intent) {
   document = empty_review("Five figures");
   const int column = new_column(document);
   put(document, column_path(column, "n"), Field::Scalar, clean_text(intent.n, false));
@@ -272,7 +272,7 @@ Change apply(Node& document, const FiveFigures& intent) {
   return {"", "every further figure narrows the answer: R\xC2\xB2, another column, the sentence's own F", 0};
 }
 
-Change apply(Node& document, const SetSecondFigure& intent) {
+Change carry_out(Node& document, const SetSecondFigure& intent) {
   const std::string from = second_key(document);
   if (from == intent.key || (intent.key != "se" && intent.key != "t" && intent.key != "p")) return {};
   for (int c = 0; c < count_of(document, "column"); ++c) {
@@ -321,7 +321,7 @@ std::optional<Change> put_block(Node& document, const TableCell& cell,
           index = add_term(next, column, term);
         }
       }
-      apply(next, EditCell{{column, index, key}, block[r][c]});
+      carry_out(next, EditCell{{column, index, key}, block[r][c]});
     }
   }
   document = std::move(next);

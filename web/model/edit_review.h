@@ -16,23 +16,23 @@ struct Change {
 
 // Each changes `document` as asked and leaves it as it was where the place does not exist. Text that cannot
 // be read as its field wants it is kept as typed: reading the review lists it under the problems.
-Change apply(Node& document, const EditCell& intent);
-Change apply(Node& document, const RenameTerm& intent);
-Change apply(Node& document, const AddTerm& intent);
-Change apply(Node& document, const RemoveTerm& intent);
-Change apply(Node& document, const AddColumn& intent);
-Change apply(Node& document, const RemoveColumn& intent);
-Change apply(Node& document, const EditColumn& intent);
-Change apply(Node& document, const EditReview& intent);
-Change apply(Node& document, const EditClaim& intent);
-Change apply(Node& document, const TickTerms& intent);
-Change apply(Node& document, const RemoveClaim& intent);
-Change apply(Node& document, const DuplicateClaim& intent);
-Change apply(Node& document, const MoveClaim& intent);
-Change apply(Node& document, const NewReview& intent);
-Change apply(Node& document, const FiveFigures& intent);
+Change carry_out(Node& document, const EditCell& intent);
+Change carry_out(Node& document, const RenameTerm& intent);
+Change carry_out(Node& document, const AddTerm& intent);
+Change carry_out(Node& document, const RemoveTerm& intent);
+Change carry_out(Node& document, const AddColumn& intent);
+Change carry_out(Node& document, const RemoveColumn& intent);
+Change carry_out(Node& document, const EditColumn& intent);
+Change carry_out(Node& document, const EditReview& intent);
+Change carry_out(Node& document, const EditClaim& intent);
+Change carry_out(Node& document, const TickTerms& intent);
+Change carry_out(Node& document, const RemoveClaim& intent);
+Change carry_out(Node& document, const DuplicateClaim& intent);
+Change carry_out(Node& document, const MoveClaim& intent);
+Change carry_out(Node& document, const NewReview& intent);
+Change carry_out(Node& document, const FiveFigures& intent);
 // Other keys for all second figures: "se" to "t", say.
-Change apply(Node& document, const SetSecondFigure& intent);
+Change carry_out(Node& document, const SetSecondFigure& intent);
 
 // A claim on `column` (an id; empty for none), with a fresh id.
 Change put_claim(Node& document, const Node& claim, const std::string& column);

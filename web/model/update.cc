@@ -38,10 +38,10 @@ class Updater {
 
   // ---- the review: all of these go through one door
   template <class Edit>
-  requires requires(Node& document, const Edit& edit) { apply(document, edit); }
+  requires requires(Node& document, const Edit& edit) { carry_out(document, edit); }
   void operator()(const Edit& intent) {
     Node next = state_.document;
-    const Change change = apply(next, intent);
+    const Change change = carry_out(next, intent);
     put(std::move(next), change);
   }
 
@@ -60,7 +60,7 @@ class Updater {
       return;
     }
     Node next = state_.document;
-    const Change change = apply(next, intent);
+    const Change change = carry_out(next, intent);
     put(std::move(next), change);
   }
 
