@@ -16,26 +16,33 @@ double left_over(double w, double power) {
   return std::pow(std::max(0.0, 1 - w), power);
 }
 
+// A point, or the two doubles around an exact decimal.
+bool as_good_as_exact(const Interval& x) { return x.width() <= 1e-15 * std::max(1.0, x.magnitude()); }
+
 // Limits of W_A for the block's t ratios and printed correlations.
-std::optional<Interval> block_wald(const std::vector<Interval>& t, const std::vector<PairInterval>& known, const std::vector<int>& block) {
+std::optional<Interval> block_wald(const std::vector<Interval>& t, const std::vector<PairInterval>& known,
+                                   const std::vector<int>& block) {
   const int k = static_cast<int>(block.size());
   AdmissibleSet set(k);
   for (int i = 0; i < k; ++i) {
     set.set_coefficient(i, t[static_cast<std::size_t>(block[static_cast<std::size_t>(i)])]);
     set.set_se(i, Interval::point(1));
   }
-  const auto place = [&](int index) { return static_cast<int>(std::find(block.begin(), block.end(), index) - block.begin()); };
+  const auto place = [&](int index) {
+    return static_cast<int>(std::find(block.begin(), block.end(), index) - block.begin());
+  };
   bool exact = true;
   for (const PairInterval& pair : known) {
     set.correlations.push_back({place(pair.i), place(pair.j), pair.value});
-    exact = exact && pair.value.width() <= 1e-15;
+    exact = exact && as_good_as_exact(pair.value);
   }
   const Eigen::MatrixXd R = Eigen::MatrixXd::Identity(k, k);
   const Eigen::VectorXd r = Eigen::VectorXd::Zero(k);
-  for (const int index : block) exact = exact && t[static_cast<std::size_t>(index)].is_point();
+  for (const int index : block) exact = exact && as_good_as_exact(t[static_cast<std::size_t>(index)]);
   if (exact) {
     Eigen::MatrixXd C = Eigen::MatrixXd::Identity(k, k);
-    for (const PairInterval& pair : known) C(place(pair.i), place(pair.j)) = C(place(pair.j), place(pair.i)) = pair.value.middle();
+    for (const PairInterval& pair : known)
+      C(place(pair.i), place(pair.j)) = C(place(pair.j), place(pair.i)) = pair.value.middle();
     return Interval::point(wald_at(R, r, set.centre, C));
   }
   const LeastWald least = least_wald(set, R, r);
@@ -46,7 +53,8 @@ std::optional<Interval> block_wald(const std::vector<Interval>& t, const std::ve
 
 }  // namespace
 
-std::optional<Interval> share_rejecting(const std::vector<Interval>& t, const std::vector<PairInterval>& known, double critical) {
+std::optional<Interval> share_rejecting(const std::vector<Interval>& t,
+                                        const std::vector<PairInterval>& known, double critical) {
   const int q = static_cast<int>(t.size());
   std::set<int> members;
   for (const PairInterval& pair : known) {
@@ -62,11 +70,13 @@ std::optional<Interval> share_rejecting(const std::vector<Interval>& t, const st
     if (!limits) return std::nullopt;
     wald_of_block = *limits;
   }
-  // The share that does not reject falls in every |t| and in W_A, so the ends of the intervals give its range.
+  // The share that does not reject falls in every |t| and in W_A, so the ends of the intervals give its
+  // range.
   double most = 1, least = 1;
   for (int i = 0; i < q; ++i) {
     if (members.count(i)) continue;
-    const double small = t[static_cast<std::size_t>(i)].mignitude(), large = t[static_cast<std::size_t>(i)].magnitude();
+    const double small = t[static_cast<std::size_t>(i)].mignitude(),
+                 large = t[static_cast<std::size_t>(i)].magnitude();
     most *= left_over(small * small / critical, (q - 1) / 2.0);
     least *= left_over(large * large / critical, (q - 1) / 2.0);
   }
