@@ -4,7 +4,13 @@
 
 #include "core/review/document_message.h"
 #include "core/review/document_scan.h"
+#include "core/review/utf8.h"
 
+// The library states what it takes for granted by assertions, a few of which damaged text breaks; what
+// follows in its code then answers properly. So they do nothing here: with NDEBUG they would be promises to
+// the compiler instead.
+#undef NDEBUG
+#define TOML_ASSERT(expression) static_cast<void>(0)
 #define TOML_HEADER_ONLY 1
 #define TOML_EXCEPTIONS 0
 #define TOML_ENABLE_FORMATTERS 0
@@ -23,6 +29,29 @@ std::string where_of(const Place& place) {
 
 Place place_of(const toml::source_region& source) {
   return {static_cast<int>(source.begin.line), static_cast<int>(source.begin.column)};
+}
+
+Error scan_message(const DocumentScan& scan, const Places& places) {
+  const Place place = places.place_of(scan.at);
+  const auto message = [&](std::string_view complaint) {
+    Error error = document_message(complaint, places.line(place.line), place.column);
+    error.where = where_of(place);
+    return error;
+  };
+  switch (scan.stop) {
+    case DocumentScan::Stop::TooDeep:
+      return {where_of(place), "tables, lists or dotted keys stand more than 64 deep",
+              "write the value at a lower depth"};
+    case DocumentScan::Stop::NoKey:
+      return message("table header");
+    case DocumentScan::Stop::Bracket:
+      return {where_of(place), "this bracket closes one of the other kind", "close [ with ] and { with }"};
+    case DocumentScan::Stop::NotAscii:
+      return message("value or key");
+    case DocumentScan::Stop::None:
+      break;
+  }
+  return {};
 }
 
 // Builds the tree. The library keeps tables sorted by key and numbers by value; the place it notes for each
@@ -86,13 +115,10 @@ Result<Node> read_document(std::string_view text) {
     return Error{"", "this file is larger than 4 MB", "keep one paper in one review"};
   if (text.substr(0, 3) == "\xEF\xBB\xBF") text.remove_prefix(3);
   const Places places(text);
+  if (const std::size_t bad = first_bad_byte(text); bad != std::string_view::npos)
+    return Error{where_of(places.place_of(bad)), "a byte that is no character", "save the file as UTF-8"};
   const DocumentScan scan = scan_document(text, kDeepest);
-  if (scan.too_deep)
-    return Error{where_of(places.place_of(*scan.too_deep)),
-                 "tables, lists or dotted keys stand more than 64 deep", "write the value at a lower depth"};
-  if (scan.no_key)
-    return Error{where_of(places.place_of(*scan.no_key)), "this header cannot be read",
-                 "write [table] or [[list]], names with blanks in double quotes, alone on its line"};
+  if (scan.stop != DocumentScan::Stop::None) return scan_message(scan, places);
   const toml::parse_result parsed = toml::parse(text);
   if (!parsed) {
     const toml::parse_error& complaint = parsed.error();

@@ -41,15 +41,18 @@ Error about_value(std::string_view line, int column) {
   if (piece.empty())
     return {"", "a value is missing or cannot be read",
             "put text and printed numbers in double quotes: se = \"0.052\""};
-  // A decimal comma: the piece before it and the one after it belong together.
-  const char first = piece[0];
-  const bool number = std::isdigit(static_cast<unsigned char>(first)) || first == '.' || first == '-' ||
-                      first == '+' || first == '(' || first == '<' || first == '>' ||
-                      !std::isprint(static_cast<unsigned char>(first));
-  if (piece.size() > 60) piece = piece.substr(0, 60);
-  while (!piece.empty() && (static_cast<unsigned char>(piece.back()) & 0xC0) == 0x80) piece.pop_back();
-  if (!piece.empty() && static_cast<unsigned char>(piece.back()) >= 0xC0) piece.pop_back();
-  if (number && std::isprint(static_cast<unsigned char>(first)))
+  // Digits, signs and brackets begin a number; so does a minus beyond ASCII before a digit or a point.
+  const std::size_t after_sign =
+      piece.compare(0, 3, "\xE2\x88\x92") == 0 || piece.compare(0, 3, "\xE2\x80\x93") == 0 ? 3 : 0;
+  const unsigned char first = static_cast<unsigned char>(after_sign < piece.size() ? piece[after_sign] : 'x');
+  const bool number = std::isdigit(first) || holds(".-+(<>", std::string_view(piece).substr(
+                                                                 std::min(after_sign, piece.size() - 1), 1));
+  if (piece.size() > 60) {
+    std::size_t end = 60;
+    while (end > 0 && (static_cast<unsigned char>(piece[end]) & 0xC0) == 0x80) --end;
+    piece = piece.substr(0, end) + "...";
+  }
+  if (number)
     return {"", "the number " + piece + " cannot be read without quotes",
             "write it as printed, in quotes: \"" + piece + "\""};
   return {"", "the text " + piece + " stands without quotes", "write it in double quotes: \"" + piece + "\""};
@@ -67,9 +70,7 @@ Error document_message(std::string_view complaint, std::string_view line, int co
             "keep one of the two; a further column, term or claim begins with its own [[header]]"};
   if (says("cannot insert") || says("existing inline table"))
     return {"", "this adds to a value that is complete already", "write all keys of a table in one place"};
-  if (says("surrogate") || says("UTF-8") || says("utf-8") || says("U+10FFFF"))
-    return {"", "a byte that is no character", "save the file as UTF-8"};
-  if (says("escape sequence"))
+  if (says("escape sequence") || says("surrogate") || says("U+10FFFF") || says("hex digit"))
     return {"", "a backslash in a quoted text begins an unknown sign", "write a backslash twice: \\\\"};
   if (says("control characters"))
     return {"", "a control character, or a quoted text that does not end on its line",

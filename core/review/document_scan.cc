@@ -5,13 +5,13 @@
 namespace rejoinder {
 namespace {
 
-// Whether a key, a second bracket or the end of the header follows the bracket at `at`.
-bool begins_header(std::string_view text, std::size_t at) {
+// Whether a key, the end of the header, or after the first bracket a second one, follows the bracket at `at`.
+bool begins_header(std::string_view text, std::size_t at, bool second) {
   const std::size_t next = text.find_first_not_of(" \t", at + 1);
   if (next == std::string_view::npos) return true;
   const char c = text[next];
   return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z') || (c >= '0' && c <= '9') || c == '_' || c == '-' ||
-         c == '"' || c == '\'' || c == '[' || c == ']';
+         c == '"' || c == '\'' || c == ']' || (c == '[' && !second);
 }
 
 }  // namespace
@@ -21,7 +21,13 @@ DocumentScan scan_document(std::string_view text, int deepest) {
     std::size_t at = 0;  // byte of its bracket
     int key_parts = 0;   // of the key whose value is being read
   };
+  using Stop = DocumentScan::Stop;
   DocumentScan scan;
+  const auto stop = [&](Stop why, std::size_t at) {
+    scan.stop = why;
+    scan.at = at;
+    return scan;
+  };
   std::vector<Level> levels(1);
   int depth = 0;  // of everything but the dots of the key being read
   int header_depth = 0;
@@ -84,9 +90,8 @@ DocumentScan scan_document(std::string_view text, int deepest) {
         break;
       case '[':
         if (levels.size() == 1 && (line_begins || header)) {
-          if (!begins_header(text, i)) {
-            scan.no_key = i;
-            return scan;
+          if (!begins_header(text, i, header)) {
+            return stop(Stop::NoKey, i);
           }
           header = true;
           depth -= header_depth;
@@ -109,18 +114,18 @@ DocumentScan scan_document(std::string_view text, int deepest) {
         [[fallthrough]];
       case '}':
         if (levels.size() > 1) {
+          if ((text[levels.back().at] == '[') != (c == ']')) return stop(Stop::Bracket, i);
           depth -= levels.back().key_parts + 1;
           levels.pop_back();
         }
         dots = 0;
         break;
       default:
-        break;
+        if (static_cast<unsigned char>(c) >= 0x80) return stop(Stop::NotAscii, i);
     }
     if (c != '\n' && c != ' ' && c != '\t' && c != '\r') line_begins = false;
     if (depth + dots > deepest) {
-      scan.too_deep = i;
-      return scan;
+      return stop(Stop::TooDeep, i);
     }
   }
   if (levels.size() > 1) scan.open = levels.back().at;

@@ -1,8 +1,8 @@
-// A first look at a review file, before the TOML library reads it: how deep it nests, and what is left open.
+// A first look at a review file, before the TOML library reads it: how deep it nests, what is left open, and
+// a few forms that the library takes for granted instead of refusing them.
 //
-// The library frees its tables by recursion, so a file with a key of a million dots could exhaust the stack;
-// such files are refused here. What is left open says better than the file's last line where a quote or a
-// bracket is missing.
+// The library frees its tables by recursion, so a file with a key of a million dots could exhaust the stack.
+// What is left open says better than the file's last line where a quote or a bracket is missing.
 #pragma once
 
 #include <cstdint>
@@ -16,9 +16,16 @@
 namespace rejoinder {
 
 struct DocumentScan {
-  std::optional<std::size_t> too_deep;  // byte where nesting passes the limit
-  std::optional<std::size_t> no_key;    // byte of a header's bracket that no key follows
-  std::optional<std::size_t> open;      // byte of the quote or bracket that the end of the file leaves open
+  enum class Stop {
+    None,
+    TooDeep,   // nesting passes the limit
+    NoKey,     // a header begins with no key
+    Bracket,   // a bracket of the other kind closes a list or an inline table
+    NotAscii,  // a sign beyond ASCII stands outside of quotes and comments
+  };
+  Stop stop = Stop::None;
+  std::size_t at = 0;               // byte where it stops
+  std::optional<std::size_t> open;  // byte of the quote or bracket that the end of the file leaves open
 };
 
 DocumentScan scan_document(std::string_view text, int deepest);

@@ -73,11 +73,13 @@ class Section {
     const std::string given = lower_case(text(key));
     if (given.empty()) return std::nullopt;
     std::string all;
+    std::size_t left = choices.size();
     for (const auto& [name, choice] : choices) {
       if (given == name) return choice;
-      all += (all.empty() ? "" : ", ") + std::string(name);
+      all += (all.empty() ? "" : left == 1 ? " or " : ", ") + ('"' + std::string(name) + '"');
+      --left;
     }
-    problem(key, "\"" + text(key) + "\" is none of the words known here", "write one of " + all);
+    problem(key, '"' + text(key) + "\" is none of the words known here", "write " + all);
     return std::nullopt;
   }
 

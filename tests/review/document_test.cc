@@ -275,6 +275,24 @@ TEST(Document, SaysWhereAndHowToMend) {
        "line 2, column 5: the quote or bracket that opens here is not closed; close it where the value ends"},
       {"a = \"\"\"x\n\n",
        "line 1, column 5: the quote or bracket that opens here is not closed; close it where the value ends"},
+      {"a = [1}\n",
+       "line 1, column 7: this bracket closes one of the other kind; close [ with ] and { with }"},
+      {"x = 1\ntitle = \xC3\x9C"
+       "berfahrt\n",
+       "line 2, column 9: the text \xC3\x9C"
+       "berfahrt stands without quotes; write it in double quotes: \"\xC3\x9C"
+       "berfahrt\""},
+      {"coef = \xE2\x88\x92"
+       "0.040\n",
+       "line 1, column 8: the number \xE2\x88\x92"
+       "0.040 cannot be read without quotes; write it as printed, in quotes: "
+       "\"\xE2\x88\x92"
+       "0.040\""},
+      {"r\xC3\xA9"
+       "coupe = 1\n",
+       "line 1, column 2: this line is no key with a value; write key = \"value\"; keys with blanks or signs "
+       "stand in double "
+       "quotes"},
       {"x = 1\n[= 2\n",
        "line 2, column 1: this header cannot be read; write [table] or [[list]], names with blanks in double "
        "quotes, "
@@ -282,7 +300,7 @@ TEST(Document, SaysWhereAndHowToMend) {
       {"a = \"\\d\"\n",
        "line 1, column 7: a backslash in a quoted text begins an unknown sign; write a backslash twice: "
        "\\\\"},
-      {"a = \"\xFF\"\n", "line 1, column 5: a byte that is no character; save the file as UTF-8"},
+      {"a = \"\xFF\"\n", "line 1, column 6: a byte that is no character; save the file as UTF-8"},
       {"a =\n",
        "line 1, column 4: a value is missing or cannot be read; put text and printed numbers in double "
        "quotes: se = \"0.052\""},

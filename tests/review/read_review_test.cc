@@ -210,7 +210,7 @@ TEST(ReadReview, ListsWhatCannotBeReadAndReadsTheRest) {
        "line 1, stars: more stars stand for smaller levels; write the level of one star first: [\"0.10\", "
        "\"0.05\", \"0.01\"]\n"},
       {"decimal = \"point\"\n",
-       "line 1, decimal: \"point\" is none of the words known here; write one of ., ,\n"},
+       "line 1, decimal: \"point\" is none of the words known here; write \".\" or \",\"\n"},
       {"[column]\nid = \"a\"\n",
        "line 1, column: a table stands where several tables may follow; write the header in two brackets, "
        "[[...]], once for each\n"},
