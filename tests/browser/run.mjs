@@ -66,7 +66,7 @@ for (const {file, name, run} of chosen) {
   } catch (thrown) {
     fault = thrown;
     const picture = `${file} ${name}`.replace(/\W+/g, '_');
-    for (const visit of trial.visits) await visit.screenshot(`failed_${picture}`).catch(() => {});
+    for (const visit of trial.visits.filter(({page}) => !page.isClosed())) await visit.screenshot(`failed_${picture}`).catch(() => {});
   }
   clearTimeout(timer);
   await trial.close().catch(() => {});
