@@ -221,8 +221,8 @@ TEST(ReadReview, ListsWhatCannotBeReadAndReadsTheRest) {
        "line 3, column \"a\" / id: this id is taken by another column; here it is read as \"a (2)\"; give "
        "each column its own id\n"},
       {"[[column]]\nid = \"a\"\nestimator = \"logit\"\n",
-       "line 3, column \"a\" / estimator: \"logit\" is none of the words known here; write one of ols, iv, "
-       "ml, other\n"},
+       "line 3, column \"a\" / estimator: \"logit\" is none of the words known here; write \"ols\", "
+       "\"iv\", \"ml\" or \"other\"\n"},
       {"[[column]]\nid = \"a\"\nn = [3]\n",
        "line 3, column \"a\" / n: a list stands where one count is expected; write one whole number\n"},
       {"[[column]]\nid = \"a\"\nn = { from = 4, to = 30 }\n",
