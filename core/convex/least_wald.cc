@@ -1,11 +1,54 @@
 #include <algorithm>
 #include <cmath>
 
+#include "core/convex/barrier.h"
 #include "core/convex/closed_forms.h"
+#include "core/convex/ratio_form.h"
 #include "core/convex/restriction_rows.h"
 #include "core/convex/wald_limits.h"
+#include "core/convex/witness.h"
 
 namespace rejoinder {
+namespace {
+
+bool agree(double guaranteed, double attained) {
+  return attained - guaranteed <= 1e-8 * std::max(attained, 1e-8);
+}
+
+LeastWald by_barrier(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Eigen::VectorXd& r) {
+  Barrier barrier(set, R, r);
+  barrier.run();
+  LeastWald least;
+  least.multipliers = barrier.multipliers();
+  least.method = "barrier method";
+  if (barrier.state() == Barrier::State::NoCovariance) {
+    least.status = LimitStatus::NoCovariance;
+    least.method = "proof that the facts on V exclude each other";
+    return least;
+  }
+  if (barrier.state() == Barrier::State::NoCoefficients) {
+    least.status = LimitStatus::NoCoefficients;
+    least.method = "proof that the facts on the coefficients exclude each other";
+    return least;
+  }
+  least.status = barrier.state() == Barrier::State::Settled ? LimitStatus::Found : LimitStatus::NotSettled;
+  least.wald = barrier.guaranteed();
+  least.weights = barrier.weights();
+  least.attained = barrier.attained();
+  least.exact = barrier.facts().exact && agree(least.wald, least.attained);
+  if (std::isfinite(least.attained))
+    least.witness = make_witness(set, R, r, barrier.coefficients(), barrier.covariance());
+  // The standard errors alone, or with a common cap, may prove a little more with the same combination.
+  const double from_errors =
+      guaranteed_wald_from_errors(set, R, r, least.weights, least.multipliers.coefficient_facts);
+  if (from_errors > least.wald) {
+    least.wald = from_errors;
+    least.exact = barrier.facts().exact && agree(least.wald, least.attained);
+  }
+  return least;
+}
+
+}  // namespace
 
 LeastWald least_wald(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Eigen::VectorXd& r) {
   LeastWald least;
@@ -15,7 +58,37 @@ LeastWald least_wald(const AdmissibleSet& set, const Eigen::MatrixXd& R, const E
     return least;
   }
   if (const auto closed = least_wald_of_exclusion(set, R, r)) return *closed;
-  return least_wald_of_errors(set, R, r);
+  const LeastWald from_errors = least_wald_of_errors(set, R, r);
+  if (!set.has_covariance_facts() || from_errors.status == LimitStatus::NoCoefficients) return from_errors;
+
+  if (const auto form = ratio_form(set, R, r)) {
+    least = by_barrier(form->set, form->R, form->r);
+    least.in_ratios = true;
+    least.method += " on t ratios and correlations";
+    if (least.witness.V.size() > 0)
+      least.witness = printed_witness(set, R, r, least.witness.b, least.witness.V);
+    if (std::isfinite(form->cut)) {
+      least.wald = std::min(least.wald, form->cut * form->cut * (1 - 1e-15));
+      least.exact = least.exact && agree(least.wald, least.attained);
+    }
+  } else {
+    least = by_barrier(set, R, r);
+  }
+  const bool contradiction =
+      least.status == LimitStatus::NoCovariance || least.status == LimitStatus::NoCoefficients;
+  if (!contradiction && from_errors.wald > least.wald * (1 + 1e-9)) {
+    // The facts add nothing, or the barrier stopped early: the programme alone proves more.
+    const bool exact = least.exact || agree(from_errors.wald, least.attained);
+    const double attained = least.attained;
+    const WaldWitness witness = least.witness;
+    const LimitStatus status = least.status;
+    least = from_errors;
+    least.attained = attained;
+    least.witness = witness;
+    least.exact = exact && std::isfinite(attained);
+    least.status = status;
+  }
+  return least;
 }
 
 }  // namespace rejoinder

@@ -6,8 +6,9 @@
 namespace rejoinder {
 namespace {
 
-// Range of F over the box of t ratios at one correlation. 2F is convex in (t1, t2), so its maximum is at a corner; its minimum is
-// 0 where the box holds the origin, else on an edge: at t2 = rho t1 for a fixed t1 (value t1² / 2), or at a corner.
+// Range of F over the box of t ratios at one correlation. 2F is convex in (t1, t2), so its maximum is at a
+// corner; its minimum is 0 where the box holds the origin, else on an edge: at t2 = rho t1 for a fixed t1
+// (value t1² / 2), or at a corner.
 Interval f_over_box(const Interval& t1, const Interval& t2, double rho) {
   Interval out{kInfinity, 0};
   for (const double a : {t1.low, t1.high})
@@ -24,7 +25,8 @@ Interval f_over_box(const Interval& t1, const Interval& t2, double rho) {
   return out;
 }
 
-// Where membership may change: F equal to an end of `f` at a corner, and the ratios at which an edge's inner minimum enters.
+// Where membership may change: F equal to an end of `f` at a corner, and the ratios at which an edge's inner
+// minimum enters.
 std::vector<double> candidates(const Interval& t1, const Interval& t2, const Interval& f) {
   std::vector<double> out = {-1, 1};
   const auto add = [&](double rho) {
@@ -65,9 +67,11 @@ std::optional<Interval> correlations_below(double t1, double t2, double k) {
   if (two_k < larger * (1 - 4e-16)) return std::nullopt;
   if (two_k == 0) return Interval{-1, 1};  // both ratios are zero, and so is F everywhere
   const double root = std::sqrt(two_k);
-  const double product = std::max(0.0, (root - std::fabs(t1)) * (root + std::fabs(t1))) * std::max(0.0, (root - std::fabs(t2)) * (root + std::fabs(t2)));
+  const double product = std::max(0.0, (root - std::fabs(t1)) * (root + std::fabs(t1))) *
+                         std::max(0.0, (root - std::fabs(t2)) * (root + std::fabs(t2)));
   const double swing = std::sqrt(product), centre = t1 * t2;
-  return Interval{std::clamp((centre - swing) / two_k, -1.0, 1.0), std::clamp((centre + swing) / two_k, -1.0, 1.0)};
+  return Interval{std::clamp((centre - swing) / two_k, -1.0, 1.0),
+                  std::clamp((centre + swing) / two_k, -1.0, 1.0)};
 }
 
 std::vector<Interval> correlations_with_f(const Interval& t1, const Interval& t2, const Interval& f) {

@@ -4,20 +4,28 @@
 
 namespace rejoinder {
 
-bool independent_rows(const AdmissibleSet& set, const Eigen::MatrixXd& R) {
-  const int q = static_cast<int>(R.rows()), p = static_cast<int>(R.cols());
-  if (q == 0 || q > p) return false;
-  Eigen::MatrixXd scaled = R;
-  for (int j = 0; j < p; ++j)
-    if (std::isfinite(set.se_high(j)) && set.se_high(j) > 0) scaled.col(j) *= set.se_high(j);
-  for (int i = 0; i < q; ++i) {
-    const double size = scaled.row(i).norm();
+namespace {
+
+bool full_rank(Eigen::MatrixXd rows) {
+  for (int i = 0; i < rows.rows(); ++i) {
+    const double size = rows.row(i).norm();
     if (!(size > 0)) return false;
-    scaled.row(i) /= size;
+    rows.row(i) /= size;
   }
-  Eigen::ColPivHouseholderQR<Eigen::MatrixXd> qr(scaled.transpose());
+  Eigen::ColPivHouseholderQR<Eigen::MatrixXd> qr(rows.transpose());
   qr.setThreshold(1e-10);
-  return qr.rank() == q;
+  return qr.rank() == rows.rows();
+}
+
+}  // namespace
+
+bool independent_rows(const AdmissibleSet& set, const Eigen::MatrixXd& R) {
+  if (R.rows() == 0 || R.rows() > R.cols()) return false;
+  if (full_rank(R)) return true;
+  Eigen::MatrixXd scaled = R;
+  for (int j = 0; j < R.cols(); ++j)
+    if (std::isfinite(set.se_high(j)) && set.se_high(j) > 0) scaled.col(j) *= set.se_high(j);
+  return full_rank(scaled);
 }
 
 }  // namespace rejoinder

@@ -47,11 +47,12 @@ struct LeastWald {
   bool exact = false;       // both agree to 1e-8 and the set was used as it is, without a wider one around it
   Eigen::VectorXd weights;  // c, q: the combination of the rows whose t ratio sets the limit
   Eigen::VectorXd
-      shifted;  // beta, p: the nearest coefficients that satisfy the restrictions; only from the programme
+      shifted;  // beta, p: the nearest coefficients that satisfy R beta = r; only from the programme
   WaldWitness witness;
   Multipliers
-      multipliers;     // with `weights`, what guaranteed_wald() needs; empty where the errors alone decide
-  std::string method;  // in words, for the working
+      multipliers;  // with `weights`, what guaranteed_wald() needs; empty where the errors alone decide
+  bool in_ratios = false;  // `weights` and `multipliers` belong to ratio_form() of the problem
+  std::string method;      // in words, for the working
 };
 
 LeastWald least_wald(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Eigen::VectorXd& r);

@@ -1,0 +1,330 @@
+// The part of BarrierModel that evaluates: barrier, derivatives, multipliers.
+#include <algorithm>
+#include <cmath>
+
+#include "core/convex/barrier_model.h"
+
+namespace rejoinder {
+namespace {
+
+double log_determinant(const Eigen::MatrixXd& Z) {
+  const Eigen::LLT<Eigen::MatrixXd> llt(Z);
+  if (llt.info() != Eigen::Success) return -kInfinity;
+  double sum = 0;
+  for (int i = 0; i < Z.rows(); ++i) {
+    const double pivot = llt.matrixLLT()(i, i);
+    if (!(pivot > 0)) return -kInfinity;
+    sum += std::log(pivot);
+  }
+  return 2 * sum;
+}
+
+Eigen::MatrixXd inverse(const Eigen::MatrixXd& Z) {
+  const Eigen::LLT<Eigen::MatrixXd> llt(Z);
+  return llt.solve(Eigen::MatrixXd::Identity(Z.rows(), Z.rows()));
+}
+
+// First and second derivative of -log det along entries (i, j) and (k, l) of the matrix whose inverse is P.
+double slope(const Eigen::MatrixXd& P, int i, int j) { return i == j ? -P(i, i) : -2 * P(i, j); }
+double curvature(const Eigen::MatrixXd& P, int i, int j, int k, int l) {
+  const double weight = (i == j ? 1 : 2) * (k == l ? 1 : 2) / 2.0;
+  return weight * (P(i, k) * P(j, l) + P(i, l) * P(j, k));
+}
+
+}  // namespace
+
+double BarrierModel::complexity(bool with_border) const {
+  return size_ + 2.0 * caps_.size() + slacks_.size() + (with_border ? rows_ + 1 : 0);
+}
+
+Eigen::MatrixXd BarrierModel::shifted(const Eigen::VectorXd& x, double tau) const {
+  Eigen::MatrixXd V(size_, size_);
+  for (int i = 0; i < size_; ++i)
+    for (int j = 0; j <= i; ++j) V(i, j) = V(j, i) = x(index_(i, j)) + (i == j ? tau : 0);
+  return V;
+}
+
+Eigen::MatrixXd BarrierModel::border(const Eigen::VectorXd& x, double tau,
+                                     const Eigen::VectorXd& offset) const {
+  Eigen::MatrixXd Z(rows_ + 1, rows_ + 1);
+  Z.topLeftCorner(rows_, rows_) = R_ * shifted(x, tau) * R_.transpose();
+  Eigen::VectorXd d = offset;
+  for (int j = 0; j < size_; ++j)
+    if (index_(size_, j) >= 0) d += R_.col(j) * x(index_(size_, j));
+  Z.col(rows_).head(rows_) = d;
+  Z.row(rows_).head(rows_) = d.transpose();
+  Z(rows_, rows_) = x(border_unknown_);
+  return Z;
+}
+
+Eigen::Matrix2d BarrierModel::cap_matrix(const CapBlock& cap, const Eigen::VectorXd& x, double tau) const {
+  Eigen::Matrix2d Z;
+  Z << cap.limit * x(cap.first) + tau, x(cap.off), x(cap.off), cap.limit * x(cap.second) + tau;
+  return Z;
+}
+
+double BarrierModel::slack_value(const Slack& slack, const Eigen::VectorXd& x, double tau) const {
+  double value = slack.constant + tau;
+  for (const auto& [at, weight] : slack.cells) value += weight * x(at);
+  return value;
+}
+
+double BarrierModel::least_tau(const Eigen::VectorXd& x) const {
+  double tau = -kInfinity;
+  if (size_ > 0)
+    tau = -Eigen::SelfAdjointEigenSolver<Eigen::MatrixXd>(shifted(x, 0), Eigen::EigenvaluesOnly)
+               .eigenvalues()(0);
+  for (const CapBlock& cap : caps_) {
+    const Eigen::Matrix2d Z = cap_matrix(cap, x, 0);
+    const double half = (Z(0, 0) - Z(1, 1)) / 2;
+    tau = std::max(tau, std::hypot(half, Z(0, 1)) - (Z(0, 0) + Z(1, 1)) / 2);
+  }
+  for (const Slack& slack : slacks_) tau = std::max(tau, -slack_value(slack, x, 0));
+  return tau;
+}
+
+double BarrierModel::scaled_wald(const Eigen::VectorXd& x, double tau) const {
+  const Eigen::MatrixXd Z = border(x, tau, offset_);
+  const Eigen::VectorXd d = Z.col(rows_).head(rows_);
+  return d.dot(Eigen::LDLT<Eigen::MatrixXd>(Z.topLeftCorner(rows_, rows_)).solve(d));
+}
+
+double BarrierModel::barrier(const Eigen::VectorXd& x, double tau, bool with_border) const {
+  double value = -log_determinant(shifted(x, tau));
+  if (with_border) value -= log_determinant(border(x, tau, offset_));
+  for (const CapBlock& cap : caps_) {
+    const Eigen::Matrix2d Z = cap_matrix(cap, x, tau);
+    const double determinant = Z(0, 0) * Z(1, 1) - Z(0, 1) * Z(0, 1);
+    if (!(Z(0, 0) > 0) || !(determinant > 0)) return kInfinity;
+    value -= std::log(determinant);
+  }
+  for (const Slack& slack : slacks_) {
+    const double s = slack_value(slack, x, tau);
+    if (!(s > 0)) return kInfinity;
+    value -= std::log(s);
+  }
+  return std::isnan(value) ? kInfinity : value;
+}
+
+void BarrierModel::derivatives(const Eigen::VectorXd& x, double tau, bool with_border,
+                               Eigen::VectorXd& gradient, Eigen::MatrixXd& hessian) const {
+  const int n = unknowns();
+  gradient = Eigen::VectorXd::Zero(n + 1);
+  hessian = Eigen::MatrixXd::Zero(n + 1, n + 1);
+  const Eigen::MatrixXd P = inverse(shifted(x, tau)), PP = P * P;
+  // The bordered block pulled back to X: Q = [R 0; 0 1]' Z^-1 [R 0; 0 1].
+  Eigen::MatrixXd Q;
+  if (with_border) {
+    Eigen::MatrixXd T = Eigen::MatrixXd::Zero(rows_ + 1, size_ + 1);
+    T.topLeftCorner(rows_, size_) = R_;
+    T(rows_, size_) = 1;
+    Q = T.transpose() * inverse(border(x, tau, offset_)) * T;
+  }
+  Eigen::MatrixXd QQ;  // against tau: Q (I without the border) Q
+  if (with_border) QQ = Q.leftCols(size_) * Q.topRows(size_);
+  for (int u = 0; u < n; ++u) {
+    const auto [i, j] = places_[u];
+    if (i < 0) continue;
+    const bool in_V = i < size_;
+    if (in_V) {
+      gradient(u) += slope(P, i, j);
+      hessian(u, n) -= slope(PP, i, j);
+    }
+    if (with_border) {
+      gradient(u) += slope(Q, i, j);
+      hessian(u, n) -= slope(QQ, i, j);
+    }
+    for (int v = 0; v <= u; ++v) {
+      const auto [k, l] = places_[v];
+      if (k < 0) continue;
+      double sum = 0;
+      if (in_V && k < size_) sum += curvature(P, i, j, k, l);
+      if (with_border) sum += curvature(Q, i, j, k, l);
+      hessian(u, v) += sum;
+    }
+  }
+  gradient(n) -= P.trace();
+  hessian(n, n) += P.squaredNorm();
+  if (with_border) {
+    gradient(n) -= Q.topLeftCorner(size_, size_).trace();
+    hessian(n, n) += Q.topLeftCorner(size_, size_).squaredNorm();
+  }
+  for (const CapBlock& cap : caps_) {
+    // The same inverse as the multipliers use: near the edge two ways to invert differ in the sixth digit.
+    const Eigen::Matrix2d Z = inverse(cap_matrix(cap, x, tau));
+    Eigen::Matrix2d along[4];
+    along[0] << cap.limit, 0, 0, 0;
+    along[1] << 0, 0, 0, cap.limit;
+    along[2] << 0, 1, 1, 0;
+    along[3].setIdentity();
+    const int at[4] = {cap.first, cap.second, cap.off, n};
+    for (int a = 0; a < 4; ++a) {
+      const Eigen::Matrix2d ZA = Z * along[a];
+      gradient(at[a]) -= ZA.trace();
+      for (int b = 0; b < 4; ++b) {
+        // Only the half below the diagonal is kept, and the tau column.
+        if (at[b] > at[a] && at[b] != n) continue;
+        if (at[a] == n && at[b] != n) continue;
+        hessian(at[a], at[b]) += (ZA * Z * along[b]).trace();
+      }
+    }
+  }
+  for (const Slack& slack : slacks_) {
+    const double s = slack_value(slack, x, tau), one = 1 / s, two = one * one;
+    for (const auto& [at, weight] : slack.cells) {
+      gradient(at) -= weight * one;
+      hessian(at, n) += weight * two;
+      for (const auto& [other, other_weight] : slack.cells)
+        if (other <= at) hessian(at, other) += weight * other_weight * two;
+    }
+    gradient(n) -= one;
+    hessian(n, n) += two;
+  }
+  for (int u = 0; u < n; ++u) {
+    for (int v = 0; v < u; ++v) hessian(v, u) = hessian(u, v);
+    hessian(n, u) = hessian(u, n);
+  }
+}
+
+BarrierModel::Dual BarrierModel::dual(const Eigen::VectorXd& x, double tau, const Eigen::VectorXd& dx,
+                                      double dtau, double kappa, bool with_border,
+                                      const Eigen::VectorXd& objective) const {
+  Dual dual;
+  dual.multipliers.facts = Eigen::VectorXd::Zero(facts_.facts.size());
+  dual.multipliers.caps.assign(facts_.caps.size(), Eigen::Matrix2d::Zero());
+  dual.multipliers.coefficient_facts = Eigen::VectorXd::Zero(set_.coefficient_facts.size());
+  // Gradient of the Lagrangian without the exact facts, to be made up by their multipliers.
+  Eigen::VectorXd left = objective;
+  const auto price = [kappa](const Eigen::MatrixXd& Z, const Eigen::MatrixXd& change) -> Eigen::MatrixXd {
+    const Eigen::MatrixXd inverted = inverse(Z);
+    return (inverted - inverted * change * inverted) / kappa;
+  };
+  const auto take = [&](const Eigen::MatrixXd& G, bool in_V_only) {
+    for (int u = 0; u < unknowns(); ++u) {
+      const auto [i, j] = places_[u];
+      if (i < 0 || (in_V_only && i >= size_)) continue;
+      left(u) += slope(G, i, j);
+    }
+  };
+  const Eigen::MatrixXd G = price(shifted(x, tau), shifted(dx, dtau));
+  take(G, true);
+  double weight_of_w = 1;
+  if (with_border) {
+    const Eigen::MatrixXd Z = border(x, tau, offset_);
+    const Eigen::MatrixXd L = price(Z, border(dx, dtau, Eigen::VectorXd::Zero(rows_)));
+    weight_of_w = L(rows_, rows_) > 0 ? L(rows_, rows_) : 1;
+    dual.c = row_mix_ * (-L.col(rows_).head(rows_) / weight_of_w);
+    Eigen::MatrixXd T = Eigen::MatrixXd::Zero(rows_ + 1, size_ + 1);
+    T.topLeftCorner(rows_, size_) = R_;
+    T(rows_, size_) = 1;
+    take(T.transpose() * L * T, false);
+  } else {
+    dual.c = Eigen::VectorXd::Zero(row_mix_.rows());
+  }
+  for (const CapBlock& cap : caps_) {
+    const Eigen::Matrix2d L = price(cap_matrix(cap, x, tau), cap_matrix(cap, dx, dtau));
+    left(cap.first) -= cap.limit * L(0, 0);
+    left(cap.second) -= cap.limit * L(1, 1);
+    left(cap.off) -= 2 * L(0, 1);
+    const CorrelationCap& fact = facts_.caps[cap.index];
+    // Back to the units of the print; the block lists the larger index first or second as the fact does.
+    const auto found_i = std::find(taking_part_.begin(), taking_part_.end(), fact.i) - taking_part_.begin();
+    const auto found_j = std::find(taking_part_.begin(), taking_part_.end(), fact.j) - taking_part_.begin();
+    const double si = scale_(found_i), sj = scale_(found_j);
+    Eigen::Matrix2d printed;
+    printed << L(0, 0) / (si * si), L(0, 1) / (si * sj), L(0, 1) / (si * sj), L(1, 1) / (sj * sj);
+    dual.multipliers.caps[cap.index] = printed / weight_of_w;
+  }
+  for (const Slack& slack : slacks_) {
+    const double s = slack_value(slack, x, tau);
+    double change = dtau;
+    for (const auto& [at, weight] : slack.cells) change += weight * dx(at);
+    const double lambda = std::max(0.0, (1 - change / s) / (s * kappa));
+    for (const auto& [at, weight] : slack.cells) left(at) -= lambda * weight;
+    const double y = slack.sign * lambda / slack.unit / weight_of_w;
+    if (slack.origin == Origin::Fact) dual.multipliers.facts(slack.index) += y;
+    // c'(Rb - r) counts once where the Lagrangian counts twice, and b is in distance units.
+    if (slack.origin == Origin::CoefficientFact)
+      dual.multipliers.coefficient_facts(slack.index) -= y * distance_unit_ / 2;
+  }
+  if (!equalities_.empty()) {
+    Eigen::MatrixXd E = Eigen::MatrixXd::Zero(unknowns(), equalities_.size());
+    Eigen::VectorXd size = Eigen::VectorXd::Zero(equalities_.size());
+    for (int e = 0; e < static_cast<int>(equalities_.size()); ++e) {
+      for (const auto& [at, weight] : equalities_[e].cells) size(e) = std::max(size(e), std::fabs(weight));
+      for (const auto& [at, weight] : equalities_[e].cells) E(at, e) += weight / size(e);
+    }
+    const bool single = std::all_of(equalities_.begin(), equalities_.end(),
+                                    [](const Equality& e) { return e.cells.size() == 1; });
+    Eigen::VectorXd mu;
+    if (single) {
+      mu = Eigen::VectorXd::Zero(equalities_.size());
+      std::vector<bool> used(unknowns(), false);
+      for (int e = 0; e < mu.size(); ++e) {
+        const int at = equalities_[e].cells[0].first;
+        if (!used[at]) mu(e) = -left(at) / E(at, e);
+        used[at] = true;
+      }
+    } else {
+      mu = E.completeOrthogonalDecomposition().solve(-left);
+    }
+    for (int e = 0; e < mu.size(); ++e) {
+      const double y = mu(e) / size(e) / weight_of_w;
+      if (equalities_[e].origin == Origin::Fact) dual.multipliers.facts(equalities_[e].index) += y;
+      if (equalities_[e].origin == Origin::CoefficientFact)
+        dual.multipliers.coefficient_facts(equalities_[e].index) -= y * distance_unit_ / 2;
+    }
+  }
+  return dual;
+}
+
+Multipliers BarrierModel::equality_proof() const {
+  Multipliers proof;
+  proof.facts = Eigen::VectorXd::Zero(facts_.facts.size());
+  proof.coefficient_facts = Eigen::VectorXd::Zero(set_.coefficient_facts.size());
+  for (int e = 0; e < static_cast<int>(equalities_.size()); ++e) {
+    double size = 0;
+    for (const auto& [at, weight] : equalities_[e].cells) size = std::max(size, std::fabs(weight));
+    if (size == 0) continue;
+    const double y = -equality_gap_(e) / size;
+    if (equalities_[e].origin == Origin::Fact) proof.facts(equalities_[e].index) += y;
+    if (equalities_[e].origin == Origin::CoefficientFact) proof.coefficient_facts(equalities_[e].index) -= y;
+  }
+  return proof;
+}
+
+Eigen::VectorXd BarrierModel::coefficients(const Eigen::VectorXd& x) const {
+  Eigen::VectorXd b = set_.centre;
+  for (int k = 0; k < size_; ++k)
+    if (index_(size_, k) >= 0) b(taking_part_[k]) += x(index_(size_, k)) * scale_(k) * distance_unit_;
+  return b;
+}
+
+Eigen::MatrixXd BarrierModel::covariance(const Eigen::VectorXd& x) const {
+  const int p = set_.size();
+  Eigen::MatrixXd V = Eigen::MatrixXd::Zero(p, p);
+  for (int j = 0; j < p; ++j) {
+    const double high = std::isfinite(set_.se_high(j)) ? set_.se_high(j) : std::max(1.0, set_.se_low(j));
+    V(j, j) = high * high;
+  }
+  for (int i = 0; i < size_; ++i)
+    for (int j = 0; j <= i; ++j)
+      V(taking_part_[i], taking_part_[j]) = V(taking_part_[j], taking_part_[i]) =
+          x(index_(i, j)) * scale_(i) * scale_(j);
+  return V;
+}
+
+Eigen::VectorXd BarrierModel::functional(const Eigen::MatrixXd& T, double& unit) const {
+  Eigen::VectorXd objective = Eigen::VectorXd::Zero(unknowns());
+  unit = 0;
+  for (int i = 0; i < size_; ++i)
+    for (int j = 0; j <= i; ++j) {
+      const double weight = T(taking_part_[i], taking_part_[j]) * scale_(i) * scale_(j);
+      objective(index_(i, j)) = i == j ? weight : 2 * weight;
+      unit += std::fabs(objective(index_(i, j)));
+    }
+  if (unit > 0) objective /= unit;
+  return objective;
+}
+
+}  // namespace rejoinder
