@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <cmath>
 
+#include "core/evidence/hidden_covariances.h"
 #include "core/number/number_text.h"
 
 namespace rejoinder {
@@ -145,6 +146,8 @@ GreatestWald greatest_of_ratio(const ColumnSet& set) {
   return out;
 }
 
+}  // namespace
+
 RouteAnswer evidence_of(const JointTest& test, const ColumnSet& set, Route route) {
   RouteAnswer out;
   out.clashes = set.clashes;
@@ -153,7 +156,7 @@ RouteAnswer evidence_of(const JointTest& test, const ColumnSet& set, Route route
   const LeastWald least = separate ? least_of_ratios(set) : least_wald(set.set, set.R, set.r);
   if (least.status == LimitStatus::NoCovariance || least.status == LimitStatus::NoCoefficients) {
     Clash clash;
-    clash.where = test.column->id + " / " + (route == Route::Facts ? "facts" : "covariance");
+    clash.where = test.column->id + " / " + (route == Route::Facts ? "facts" : route == Route::NestedColumns ? "nested columns" : "covariance");
     clash.says = least.status == LimitStatus::NoCovariance
                      ? "No covariance matrix of the tested estimates agrees with all that is printed about them, rounding allowed for."
                      : "The coefficients and the printed combinations of them do not go together, rounding allowed for.";
@@ -216,12 +219,10 @@ RouteAnswer evidence_of(const JointTest& test, const ColumnSet& set, Route route
   return out;
 }
 
-}  // namespace
-
 RouteAnswer column_evidence(const JointTest& test) {
   RouteAnswer out;
   if (!test.column || !test.restrictions) return out;
-  const ColumnSet set = column_set(test, false);
+  const ColumnSet set = column_set(test);
   out.clashes = set.clashes;
   if (!set.any_known && !set.variances_by_matrix) return out;
   const bool coefficients_known =
@@ -240,16 +241,53 @@ RouteAnswer column_evidence(const JointTest& test) {
   return evidence_of(test, set, Route::Estimates);
 }
 
-RouteAnswer facts_evidence(const JointTest& test) {
+namespace {
+
+template <class T>
+void append(std::vector<T>& to, const std::vector<T>& from) {
+  to.insert(to.end(), from.begin(), from.end());
+}
+
+void tell(RouteAnswer& answer, const HiddenFacts& hidden) {
+  append(answer.cautions, hidden.cautions);
+  if (!answer.evidence || hidden.used == 0) return;
+  append(answer.evidence->assumes, hidden.assumes);
+  answer.evidence->working.insert(answer.evidence->working.begin(), hidden.working.begin(), hidden.working.end());
+  append(answer.evidence->rests_on, hidden.cells);
+}
+
+RouteAnswer only_cautions(std::initializer_list<const HiddenFacts*> all) {
   RouteAnswer out;
-  if (!test.column || !test.restrictions) return out;
-  if (std::none_of(test.column->facts.begin(), test.column->facts.end(), [](const Fact& f) { return !f.of.empty(); })) return out;
-  const ColumnSet set = column_set(test, true);
-  if (set.facts == 0) {
-    out.clashes = set.clashes;
-    return out;
-  }
-  return evidence_of(test, set, Route::Facts);
+  for (const HiddenFacts* hidden : all) append(out.cautions, hidden->cautions);
+  return out;
+}
+
+}  // namespace
+
+RouteAnswer facts_evidence(const JointTest& test) {
+  if (!test.column || !test.restrictions) return {};
+  ColumnSet set = column_set(test, {true, false});
+  const HiddenFacts groups = add_group_sizes(test, set), means = add_means(test, set);
+  if (set.facts + groups.used + means.used == 0) return only_cautions({&groups, &means});
+  set.facts += groups.used + means.used;
+  RouteAnswer out = evidence_of(test, set, Route::Facts);
+  tell(out, groups);
+  tell(out, means);
+  return out;
+}
+
+RouteAnswer nested_columns_evidence(const JointTest& test) {
+  if (!test.column || !test.restrictions) return {};
+  ColumnSet set = column_set(test, {true, false});
+  const HiddenFacts nested = add_nested_columns(test, set);
+  if (nested.used == 0) return only_cautions({&nested});
+  const HiddenFacts groups = add_group_sizes(test, set), means = add_means(test, set);
+  set.facts += nested.used + groups.used + means.used;
+  RouteAnswer out = evidence_of(test, set, Route::NestedColumns);
+  tell(out, nested);
+  tell(out, groups);
+  tell(out, means);
+  return out;
 }
 
 }  // namespace rejoinder

@@ -30,14 +30,26 @@ struct ColumnSet {
   std::vector<std::string> cautions;
 };
 
-// `with_facts`: printed combinations that touch the tested terms, or share a term with one that does, are used too, and
-// their terms join the set. Contract: the test has restrictions.
-ColumnSet column_set(const JointTest& test, bool with_facts);
+struct ColumnSetChoices {
+  bool combinations = false;  // printed combinations that touch the tested terms, or share a term with one that does, are
+                              // used too, and their terms join the set
+  bool ratios = true;         // exclusions may be put as t ratios
+};
+
+// Contract: the test has restrictions.
+ColumnSet column_set(const JointTest& test, const ColumnSetChoices& choices = {});
 
 // Route `covariance` where every variance and covariance of the tested estimates is printed, else `estimates`.
 RouteAnswer column_evidence(const JointTest& test);
 
-// Route `facts`: the same with printed combinations. No evidence where the column prints none that bears on the claim.
+// Route `facts`: the same with what the column gives away: printed combinations, group sizes, means. No evidence where it prints
+// none that bears on the claim.
 RouteAnswer facts_evidence(const JointTest& test);
+
+// Route `nested columns`: with the changes of coefficients between columns too.
+RouteAnswer nested_columns_evidence(const JointTest& test);
+
+// Limits over the set as evidence; what both routes above and overall_f.h share.
+RouteAnswer evidence_of(const JointTest& test, const ColumnSet& set, Route route);
 
 }  // namespace rejoinder

@@ -62,14 +62,14 @@ void for_cells(const PrintedMatrix& matrix, const std::vector<std::string>& name
 
 }  // namespace
 
-ColumnSet column_set(const JointTest& test, bool with_facts) {
+ColumnSet column_set(const JointTest& test, const ColumnSetChoices& choices) {
   ColumnSet out;
   const Column& column = *test.column;
   const Restrictions& restrictions = *test.restrictions;
   for (const TermName& name : restrictions.terms) out.terms.push_back(name.term);
   const int tested = static_cast<int>(out.terms.size());
   std::vector<UsableFact> facts;
-  if (with_facts) facts = facts_that_touch(column, out.terms);
+  if (choices.combinations) facts = facts_that_touch(column, out.terms);
   const int p = static_cast<int>(out.terms.size());
 
   out.R = Eigen::MatrixXd::Zero(restrictions.q(), p);
@@ -109,7 +109,7 @@ ColumnSet column_set(const JointTest& test, bool with_facts) {
     }
 
   // t ratios where the hypothesis excludes single terms and V is known by s.e. and correlations alone.
-  out.in_ratios = restrictions.exclusion() && facts.empty() && !covariances_printed;
+  out.in_ratios = choices.ratios && restrictions.exclusion() && facts.empty() && !covariances_printed;
   for (int j = 0; j < p; ++j) {
     const CoefficientLimits& limits = out.limits[static_cast<std::size_t>(j)];
     if (out.in_ratios) {

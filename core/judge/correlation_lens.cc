@@ -119,7 +119,7 @@ void lens_of_exclusion(Finding& finding, const JointTest& test, const Reported& 
 
 std::optional<Interval> turning_correlation(const JointTest& test) {
   if (!test.column || !test.restrictions) return std::nullopt;
-  const ColumnSet set = column_set(test, false);
+  const ColumnSet set = column_set(test, {false, false});
   const std::optional<Pair> pair = pair_of(test, set);
   if (!pair) return std::nullopt;
   const double critical = critical_wald(test);
@@ -135,7 +135,7 @@ void add_correlation_lens(Finding& finding, const JointTest& test, const Reporte
   if (!test.column || !test.restrictions) return;
   // A fit or a covariance already says what the correlation would: the lens is for what the print leaves open.
   if (std::none_of(finding.evidence.begin(), finding.evidence.end(), [](const Evidence& e) { return e.route == Route::Estimates; })) return;
-  const ColumnSet set = column_set(test, false);
+  const ColumnSet set = column_set(test);
   if (const auto pair = pair_of(test, set)) {
     lens_of_combination(finding, *pair, test, said, set);
     return;

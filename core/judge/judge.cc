@@ -7,6 +7,7 @@
 #include "core/evidence/fit.h"
 #include "core/evidence/fuse.h"
 #include "core/evidence/likelihood.h"
+#include "core/evidence/overall_f.h"
 #include "core/evidence/printed_test.h"
 #include "core/judge/correlation_lens.h"
 #include "core/judge/reported.h"
@@ -131,6 +132,8 @@ Judged judge(const Review& review, const Claim& claim) {
   take(all, fit_evidence(test));
   take(all, column_evidence(test));
   take(all, facts_evidence(test));
+  take(all, nested_columns_evidence(test));
+  take(all, overall_f_evidence(test));
   take(all, likelihood_evidence(test));
   if (all.evidence.empty() && test.refused_comparison.empty() && !any_hard(all.clashes)) take(all, printed_test_evidence(test));
   append(finding.cautions, test.cautions);
