@@ -38,12 +38,16 @@ Interval p_of_stars(const Review& review, int count) {
   return {m < known ? levels[static_cast<std::size_t>(m)] : 0.0, m > 0 ? levels[static_cast<std::size_t>(m - 1)] : 1.0};
 }
 
+// Cuts `target` down to what `by` leaves of it; false where nothing is left. Ends that miss each other by floating point noise
+// alone, as half units of rounding may, still touch.
 bool narrow(Interval& target, const Interval& by) {
-  // Half a unit of rounding decides ties, so ends that touch within floating point noise still meet.
-  const auto noise = [](double x) { return std::isinf(x) ? 0.0 : 1e-12 * std::fabs(x); };
-  const std::optional<Interval> both = meet(target, {by.low - noise(by.low), by.high + noise(by.high)});
-  if (!both) return false;
-  target = *both;
+  if (const std::optional<Interval> both = meet(target, by)) {
+    target = *both;
+    return true;
+  }
+  const double below = target.high < by.low ? target.high : by.high, above = target.high < by.low ? by.low : target.low;
+  if (above - below > 1e-12 * std::max(std::fabs(above), std::fabs(below))) return false;
+  target = {below, above};
   return true;
 }
 

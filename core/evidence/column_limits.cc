@@ -124,6 +124,50 @@ std::optional<double> printed_wald(const ColumnSet& set) {
   return wald;
 }
 
+bool as_good_as_exact(const Interval& x) { return x.width() <= 1e-15 * x.magnitude(); }
+
+// Coefficients and covariances printed without rounding: one W, computed and not bounded. Absent where anything is rounded,
+// unknown or singular.
+std::optional<double> exact_wald(const ColumnSet& set) {
+  const int p = set.set.size();
+  if (set.pairs_known < set.pairs || set.facts > 0) return std::nullopt;
+  Eigen::MatrixXd V = Eigen::MatrixXd::Zero(p, p);
+  for (int i = 0; i < p; ++i) {
+    const Interval variance = set.set.variance(i);
+    if (!(set.set.half_width(i) <= 1e-15 * std::fabs(set.set.centre(i))) || !(variance.width() <= 4e-15 * variance.high)) return std::nullopt;
+    V(i, i) = variance.middle();
+  }
+  for (const PairInterval& pair : set.set.correlations) {
+    if (!as_good_as_exact(pair.value)) return std::nullopt;
+    V(pair.i, pair.j) = V(pair.j, pair.i) = pair.value.middle() * std::sqrt(V(pair.i, pair.i) * V(pair.j, pair.j));
+  }
+  for (const PairInterval& pair : set.set.covariances) {
+    if (!as_good_as_exact(pair.value)) return std::nullopt;
+    V(pair.i, pair.j) = V(pair.j, pair.i) = pair.value.middle();
+  }
+  const double wald = wald_at(set.R, set.r, set.set.centre, V);
+  if (!std::isfinite(wald) || wald < 0) return std::nullopt;
+  return wald;
+}
+
+LeastWald least_at(double wald) {
+  LeastWald out;
+  out.status = LimitStatus::Found;
+  out.wald = out.attained = wald;
+  out.exact = true;
+  out.method = "the figures are exact";
+  return out;
+}
+
+GreatestWald greatest_at(double wald) {
+  GreatestWald out;
+  out.status = LimitStatus::Found;
+  out.attained = out.guaranteed = wald;
+  out.kind = GreatestWald::Exact;
+  out.method = "the figures are exact";
+  return out;
+}
+
 // Exclusion with nothing known of the correlations: the largest squared t ratio, which needs no solver and takes half-lines.
 LeastWald least_of_ratios(const ColumnSet& set) {
   double most = 0;
@@ -153,7 +197,8 @@ RouteAnswer evidence_of(const JointTest& test, const ColumnSet& set, Route route
   out.clashes = set.clashes;
   out.cautions = set.cautions;
   const bool separate = set.in_ratios && set.pairs_known == 0 && !set.assumed_correlations;
-  const LeastWald least = separate ? least_of_ratios(set) : least_wald(set.set, set.R, set.r);
+  const std::optional<double> exact = separate ? std::nullopt : exact_wald(set);
+  const LeastWald least = separate ? least_of_ratios(set) : exact ? least_at(*exact) : least_wald(set.set, set.R, set.r);
   if (least.status == LimitStatus::NoCovariance || least.status == LimitStatus::NoCoefficients) {
     Clash clash;
     clash.where = test.column->id + " / " + (route == Route::Facts ? "facts" : route == Route::NestedColumns ? "nested columns" : "covariance");
@@ -164,7 +209,9 @@ RouteAnswer evidence_of(const JointTest& test, const ColumnSet& set, Route route
     out.clashes.push_back(std::move(clash));
     return out;
   }
-  const GreatestWald greatest = separate && test.q == 1 ? greatest_of_ratio(set) : greatest_wald(set.set, set.R, set.r);
+  const GreatestWald greatest = separate && test.q == 1 ? greatest_of_ratio(set)
+                                : exact                  ? greatest_at(*exact)
+                                                         : greatest_wald(set.set, set.R, set.r);
   Evidence e;
   e.route = route;
   e.df = test.df;
