@@ -2,8 +2,6 @@
 // damaged.
 #include <gtest/gtest.h>
 
-#include <algorithm>
-#include <filesystem>
 #include <fstream>
 #include <random>
 #include <sstream>
@@ -17,18 +15,20 @@ struct StoredReview {
   std::string name, text;
 };
 
+std::string text_of(const std::string& path) {
+  std::ifstream file(path, std::ios::binary);
+  EXPECT_TRUE(file.good()) << path;
+  std::ostringstream text;
+  text << file.rdbuf();
+  return text.str();
+}
+
+// From a list, as walking through folders does not work in every build.
 std::vector<StoredReview> stored_reviews() {
+  const std::string folder = std::string(REJOINDER_TEST_DATA) + "/reviews/";
   std::vector<StoredReview> all;
-  const std::filesystem::path folder = std::filesystem::path(REJOINDER_TEST_DATA) / "reviews";
-  for (const auto& entry : std::filesystem::recursive_directory_iterator(folder)) {
-    if (entry.path().extension() != ".toml") continue;
-    std::ifstream file(entry.path(), std::ios::binary);
-    std::ostringstream text;
-    text << file.rdbuf();
-    all.push_back({entry.path().filename().string(), text.str()});
-  }
-  std::sort(all.begin(), all.end(),
-            [](const StoredReview& a, const StoredReview& b) { return a.name < b.name; });
+  std::istringstream index(text_of(folder + "index.txt"));
+  for (std::string name; std::getline(index, name);) all.push_back({name, text_of(folder + name)});
   return all;
 }
 
