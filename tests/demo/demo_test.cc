@@ -1,9 +1,10 @@
 // The invented reviews of demo/ and the findings they must give.
 //
 // Derived: the expected states and limits were worked out apart from the program, from the printed figures
-// alone: corners of the rounding boxes for R², covariances and log-likelihoods, the largest t ratio and |d| /
-// (s1 + s2) for coefficients without a covariance. They are rounded here to about four digits, so limits are
-// compared at 1e-3.
+// alone: corners of the rounding boxes for R² (narrowed by adjusted R²), covariances and log-likelihoods; for
+// coefficients without a covariance the largest t ratio and |d| / (s1 + s2), and W <= df R² / (1 - R²), since
+// no part of a regression explains more than the whole. They are rounded here to about four digits, so limits
+// are compared at 1e-3.
 #include <gtest/gtest.h>
 
 #include <cmath>

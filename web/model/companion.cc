@@ -151,6 +151,12 @@ std::string asks_html(const Finding& finding) {
   return bullets(items, "ol");
 }
 
+std::string label_of_column(const Node& document, const std::string& id) {
+  for (int c = 0; c < count_of(document, "column"); ++c)
+    if (column_text(document, c, "id") == id) return column_name(document, c);
+  return id;
+}
+
 std::string claim_html(const AppState& state, int index) {
   const Finding& finding = state.checked.findings[static_cast<std::size_t>(index)];
   const bool chosen = index == state.claim;
@@ -162,7 +168,7 @@ std::string claim_html(const AppState& state, int index) {
   out += element("p", finding.headline) + element("p", finding.sentence);
   if (!finding.restrictions.empty()) {
     std::string about = "Restrictions: " + finding.restrictions;
-    if (!finding.column.empty()) about += ", in " + finding.column;
+    if (!finding.column.empty()) about += ", in column " + label_of_column(state.document, finding.column);
     if (!finding.page.empty()) about += ", " + finding.page;
     out += element("p", about);
   }
