@@ -4,6 +4,7 @@
 #include <cctype>
 
 #include "core/paste/columns.h"
+#include "core/paste/finish_table.h"
 #include "core/paste/labels.h"
 #include "core/paste/second_figure.h"
 
@@ -35,19 +36,6 @@ void strip_markup(PlainLine& line) {
   line = std::move(stripped);
 }
 
-// Lines such as "Controls  yes  yes", or notes on further controls: k is then not the number of rows.
-bool hides_regressors(const PastedTable& table) {
-  for (const PastedRow& row : table.rows)
-    if (row.kind == PastedRow::Kind::Mark && !row.intercept) return true;
-  for (const std::string& note : table.notes) {
-    const std::string words = lower_case(note);
-    for (const char* phrase :
-         {"control", "also included", "adjusted for", "fixed effect", "not shown", "dummies"})
-      if (contains(words, phrase)) return true;
-  }
-  return false;
-}
-
 class TableReader {
  public:
   explicit TableReader(std::string_view text) : extract_(text), lines_(plain_lines(extract_)) {
@@ -64,17 +52,11 @@ class TableReader {
     find_columns();
     for (const TableLine& line : split_) take(line);
     if (!waiting_.label.empty()) note(waiting_);
-    finish();
+    finish_table(table_, split_, divider_);
     return std::move(table_);
   }
 
  private:
-  // A line of figures: nothing but figures, empty marks and words that mark inclusion stand after the label.
-  static bool is_data(const TableLine& line) {
-    if (line.figures() == 0) return false;
-    return std::all_of(line.values.begin(), line.values.end(),
-                       [](const Piece& p) { return p.kind != Piece::Kind::Words || is_mark_word(p.text); });
-  }
   static bool is_numbers_heading(const TableLine& line) {
     return !line.values.empty() && std::all_of(line.values.begin(), line.values.end(),
                                                [](const Piece& p) { return is_column_number(p.text); });
@@ -145,12 +127,6 @@ class TableReader {
     by_roles_ = by_roles;
   }
   static std::string plain_heading(const std::string& heading) { return plain_lines(heading).front().plain; }
-
-  TextPlace place_of(const TableLine& line, int first, int last) const {
-    if (first >= last) return {line.number, 0, 0};
-    return {line.number, line.text->column[static_cast<std::size_t>(first)] + 1,
-            line.text->column[static_cast<std::size_t>(last - 1)] + 1};
-  }
 
   PastedCell cell_of(const TableLine& line, const Piece& piece, const std::string& key,
                      const std::string& doubt) const {
@@ -304,111 +280,6 @@ class TableReader {
       above.more.push_back(cell_of(line, pieces[i], key, placed[i].doubt));
       above.more_column.push_back(roles_[static_cast<std::size_t>(placed[i].column)].column);
     }
-  }
-
-  void decide_decimal() {
-    int commas = 0, points = 0;
-    const auto look = [&](const PastedCell& cell) {
-      const std::size_t comma = cell.text.rfind(',');
-      points += contains(cell.text, ".");
-      if (comma == std::string::npos || cell.key == "ci") return;
-      std::size_t digits = 0;
-      while (comma + 1 + digits < cell.text.size() &&
-             std::isdigit(static_cast<unsigned char>(cell.text[comma + 1 + digits])))
-        ++digits;
-      const bool leading_zero =
-          comma > 0 && cell.text[comma - 1] == '0' &&
-          (comma == 1 || !std::isdigit(static_cast<unsigned char>(cell.text[comma - 2])));
-      commas += digits != 3 || leading_zero;
-    };
-    for (const PastedRow& row : table_.rows) {
-      for (const PastedCell& cell : row.cells) look(cell);
-      for (const PastedCell& cell : row.more) look(cell);
-    }
-    if (commas > 0 && points == 0) {
-      table_.decimal = ',';
-      table_.doubts.push_back("the comma is read as the decimal mark throughout");
-    } else if (commas > 0) {
-      table_.doubts.push_back("both points and commas look like decimal marks; the point is read as one");
-    }
-  }
-
-  // Figures that stand in words only: "(n = 180 fields)".
-  void add_stated_figures() {
-    const auto has = [&](const char* key) {
-      return std::any_of(table_.rows.begin(), table_.rows.end(),
-                         [&](const PastedRow& row) { return row.key == key; });
-    };
-    const auto add = [&](const char* key, std::initializer_list<const char*> names) {
-      if (has(key) || table_.columns.empty()) return;
-      for (const TableLine& line : split_) {
-        for (const char* name : names) {
-          const std::string figure = figure_in(line.text->plain, name);
-          if (figure.empty()) continue;
-          PastedRow row;
-          row.kind = PastedRow::Kind::Foot;
-          row.key = key;
-          row.label = name;
-          row.place = place_of(line, 0, line.text->size());
-          PastedCell cell{figure, key,
-                          table_.columns.size() > 1 ? "it is stated once, not column by column" : "",
-                          row.place};
-          row.cells.assign(table_.columns.size(), cell);
-          table_.rows.push_back(std::move(row));
-          return;
-        }
-      }
-    };
-    add("n", {"n", "N"});
-    if (table_.columns.size() == 1) add("r2", {"R2"});
-  }
-
-  void finish() {
-    decide_decimal();
-    add_stated_figures();
-    for (const TableLine& line : split_) {
-      if (is_data(line)) continue;
-      const std::string words = line.text->plain;
-      if (table_.second.empty()) table_.second = second_figure_in(words);
-      if (table_.stars.empty()) table_.stars = star_levels_in(words);
-      if (table_.errors.empty()) table_.errors = errors_in(words);
-    }
-    const bool stated = !table_.second.empty();
-    bool open = false;  // some second figure has no key of its own
-    for (const PastedRow& row : table_.rows)
-      for (const PastedCell& cell : row.more) open = open || cell.key.empty();
-    if (!open) {
-      table_.second = "";
-      for (const PastedRow& row : table_.rows)
-        if (!row.more.empty()) table_.second = row.more.front().key;
-      table_.second_reason = table_.second.empty() ? "" : "the table says so";
-    } else if (stated) {
-      table_.second_reason = "the note under the table says so";
-    } else {
-      infer_second_figure(table_);
-    }
-    // Keys of figures in brackets follow the one reading.
-    for (PastedRow& row : table_.rows)
-      for (PastedCell& cell : row.more)
-        if (cell.key.empty()) cell.key = table_.second;
-    tell_misfits(table_);
-    tell_unusual_layout();
-  }
-
-  void tell_unusual_layout() {
-    for (const PastedRow& row : table_.rows)
-      if (row.kind == PastedRow::Kind::Term && heading_key(row.label) == "coef")
-        table_.doubts.push_back("the terms seem to stand across the page; each column is read as one fit");
-    if (table_.variance_table())
-      table_.doubts.push_back("read as an analysis of variance table, one source a line");
-    const bool k_printed = std::any_of(table_.rows.begin(), table_.rows.end(),
-                                       [](const PastedRow& row) { return row.key == "k"; });
-    if (!k_printed && hides_regressors(table_))
-      table_.doubts.push_back(
-          "regressors are named without figures, so k is more than the rows: type it in the foot");
-    if (divider_ == Divider::Blanks && table_.columns.size() > 1)
-      table_.doubts.push_back(
-          "single blanks divide the columns, so empty cells leave no trace; look at each line");
   }
 
   struct Role {
