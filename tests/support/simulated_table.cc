@@ -33,6 +33,25 @@ double SimulatedRegression::wald_of_tail(int keep) const {
   return d.dot(covariance.bottomRightCorner(q, q).ldlt().solve(d));
 }
 
+SimulatedRegression fit_regression(const Eigen::MatrixXd& regressors, const Eigen::VectorXd& y) {
+  const int n = static_cast<int>(regressors.rows()), k = static_cast<int>(regressors.cols());
+  Eigen::MatrixXd X(n, k + 1);
+  X.col(0).setOnes();
+  X.rightCols(k) = regressors;
+  SimulatedRegression out;
+  out.n = n;
+  out.k = k;
+  out.coefficients = X.colPivHouseholderQr().solve(y);
+  out.tss = (y.array() - y.mean()).matrix().squaredNorm();
+  out.ssr = residual_sum(X, y);
+  out.r2 = 1 - out.ssr / out.tss;
+  out.covariance = out.ssr / (n - k - 1) * (X.transpose() * X).inverse();
+  for (int keep = 0; keep <= k; ++keep) out.short_r2_.push_back(1 - residual_sum(X.leftCols(keep + 1), y) / out.tss);
+  out.means = regressors.colwise().mean().transpose();
+  out.mean_of_outcome = y.mean();
+  return out;
+}
+
 SimulatedRegression simulate_regression(std::uint64_t seed, int n, int k, double correlation) {
   Draws draws(seed);
   Eigen::MatrixXd X(n, k + 1);
@@ -47,16 +66,7 @@ SimulatedRegression simulate_regression(std::uint64_t seed, int n, int k, double
       y(i) += effects(j) * X(i, j + 1);
     }
   }
-  SimulatedRegression out;
-  out.n = n;
-  out.k = k;
-  out.coefficients = X.colPivHouseholderQr().solve(y);
-  out.tss = (y.array() - y.mean()).matrix().squaredNorm();
-  out.ssr = residual_sum(X, y);
-  out.r2 = 1 - out.ssr / out.tss;
-  out.covariance = out.ssr / (n - k - 1) * (X.transpose() * X).inverse();
-  for (int keep = 0; keep <= k; ++keep) out.short_r2_.push_back(1 - residual_sum(X.leftCols(keep + 1), y) / out.tss);
-  return out;
+  return fit_regression(X.rightCols(k), y);
 }
 
 std::string printed(double x, int decimals) {

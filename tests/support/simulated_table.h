@@ -14,6 +14,8 @@ struct SimulatedRegression {
   Eigen::VectorXd coefficients; // k + 1, intercept first
   Eigen::MatrixXd covariance;   // k + 1 square, conventional
   double r2 = 0, ssr = 0, tss = 0;
+  Eigen::VectorXd means;        // k, of the regressors
+  double mean_of_outcome = 0;
   // The same regression without the slopes from `keep` on: terms x1 .. x<keep> stay.
   double short_r2(int keep) const { return short_r2_[static_cast<std::size_t>(keep)]; }
   double short_ssr(int keep) const { return (1 - short_r2(keep)) * tss; }
@@ -22,6 +24,9 @@ struct SimulatedRegression {
 
   std::vector<double> short_r2_;  // by the number of slopes kept, 0 .. k
 };
+
+// Fits y on a constant and the columns of `regressors` (n x k).
+SimulatedRegression fit_regression(const Eigen::MatrixXd& regressors, const Eigen::VectorXd& y);
 
 // Regressors with correlation about `correlation` and effects of a size that makes the joint test interesting.
 SimulatedRegression simulate_regression(std::uint64_t seed, int n, int k, double correlation);
