@@ -50,6 +50,8 @@ void carry_out(const Intent& intent) {
       case Effect::Kind::KeepNow: keep_soon(); break;
     }
   }
+  // Five figures make a review of their own, and their sheet has done its work.
+  if (std::holds_alternative<FiveFigures>(intent)) update(state, ShowOverlay{Overlay::None});
   // An overlay takes the focus for itself, and gives it back to nothing in particular.
   if (state.overlay != before) hands.give_focus("", false);
   companion_is_stale = true;
@@ -85,7 +87,8 @@ Intent show_panes(float width, float top, float bottom) {
   const auto take = [&](Intent more) {
     if (more.index() != 0) intent = std::move(more);
   };
-  if (width < px(kTabsBelow)) {
+  hands.view.tabbed = width < px(kTabsBelow);
+  if (hands.view.tabbed) {
     take(show_tabs(state, hands, ImVec2(0, top), width));
     const ImVec2 low(0, top + tabs_height()), high(width, bottom);
     switch (state.pane) {

@@ -129,7 +129,7 @@ Intent show_allows(const AppState& state, Hands& hands, const ImVec2& low, const
     if (more.index() != 0) intent = std::move(more);
   };
 
-  draw_line(Type::NoteStrong, pen.at(), colours.soft, "What the print allows");
+  if (!hands.view.tabbed) draw_line(Type::NoteStrong, pen.at(), colours.soft, "What the print allows");
   const bool any = state.claim >= 0 && state.claim < static_cast<int>(state.checked.findings.size());
   if (any) {
     const std::string page = claim_text(state.document, state.claim, "page");
@@ -156,7 +156,7 @@ Intent show_allows(const AppState& state, Hands& hands, const ImVec2& low, const
       pen.y += height;
       pen.skip(12);
     }
-    if (finding.correlation) {
+    if (has_correlation_line(finding)) {
       const float height = correlation_line_height(finding);
       draw_correlation_line(finding, pen.at(), pen.width);
       mark("picture/correlation", "img", pen.at(), ImVec2(pen.right(), pen.y + height));

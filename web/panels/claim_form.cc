@@ -58,14 +58,18 @@ struct Form {
   std::string text(const char* key) const { return claim_text(state.document, claim, key); }
   std::string id(const char* key) const { return "claim/" + std::to_string(claim) + "/" + key; }
 
-  void blank(Flow& flow, const char* key, float width, const char* hint) {
+  // A blank with the words before it, never parted from them.
+  void blank(Flow& flow, const char* words, const char* key, float width, const char* hint) {
     FieldStyle style;
     style.type = Type::Note;
     style.frame = Frame::Line;
     style.hint = hint;
     const std::string value = text(key);
     const float wide = std::min(std::max(px(width), text_width(Type::Note, value) + px(12)), px(220));
-    const ImVec2 at = flow.room(wide);
+    const float lead = text_width(Type::Note, words) + px(5);
+    ImVec2 at = flow.room(lead + wide);
+    draw_line(Type::Note, ImVec2(at.x, at.y + px(4)), palette().soft, words);
+    at.x += lead;
     const ImVec2 low(at.x, at.y + px(3)), high(at.x + wide, at.y + flow.line() - px(2));
     if (const auto typed = show_field(hands, id(key), value, low, high, style)) intent = EditClaim{claim, key, *typed};
   }
@@ -210,14 +214,10 @@ Intent show_claim_form(const AppState& state, Hands& hands, int claim, Pen& pen)
   }
   flow.end();
   Flow reported(pen);
-  reported.words("reported: F");
-  form.blank(reported, "f", 58, "");
-  reported.words("or χ²");
-  form.blank(reported, "chi2", 58, "");
-  reported.words("p");
-  form.blank(reported, "p", 58, "");
-  reported.words("df");
-  form.blank(reported, "df", 66, "3, 205");
+  form.blank(reported, "reported: F", "f", 58, "");
+  form.blank(reported, "or χ²", "chi2", 58, "");
+  form.blank(reported, "p", "p", 58, "");
+  form.blank(reported, "df", "df", 66, "3, 205");
   reported.end();
   Flow decision(pen);
   decision.words("the text");
@@ -228,10 +228,8 @@ Intent show_claim_form(const AppState& state, Hands& hands, int claim, Pen& pen)
   if (picked >= 0 && picked != said) {
     form.intent = EditClaim{claim, "rejects", picked == 0 ? "" : picked == 1 ? "true" : "false"};
   }
-  decision.words("at");
-  form.blank(decision, "level", 46, "0.05");
-  decision.words("on page");
-  form.blank(decision, "page", 58, "p. 14");
+  form.blank(decision, "at", "level", 46, "0.05");
+  form.blank(decision, "on page", "page", 58, "p. 14");
   decision.end();
   return form.intent;
 }

@@ -41,16 +41,24 @@ std::string restriction_line(const AppState& state, int claim) {
   return line;
 }
 
+// ".086" gives "p = .086", "<.05" gives "p < .05".
+std::string p_words(const std::string& printed) {
+  const bool relation = !printed.empty() && (printed[0] == '<' || printed[0] == '>');
+  if (!relation) return "p = " + printed;
+  const size_t digits = std::min(printed.find_first_not_of(" ", 1), printed.size());
+  return "p " + printed.substr(0, 1) + " " + printed.substr(digits);
+}
+
 // The three parts in one quiet line.
-std::string parts_line(const Finding& finding, const std::string& p_printed) {
+std::string parts_line(const Finding& finding, const std::string& p_printed, double usual_level) {
   std::string line;
   const auto add = [&](const std::string& part) { line += (line.empty() ? "" : "  ·  ") + part; };
-  if (finding.figure == FigurePart::WithinLimits) add(finding.reported ? "figure within limits" : "p " + p_printed + " within limits");
-  if (finding.figure == FigurePart::OutsideLimits) add(finding.reported ? "figure outside limits" : "p " + p_printed + " outside limits");
+  if (finding.figure == FigurePart::WithinLimits) add(finding.reported ? "figure within limits" : p_words(p_printed) + " within limits");
+  if (finding.figure == FigurePart::OutsideLimits) add(finding.reported ? "figure outside limits" : p_words(p_printed) + " outside limits");
   if (finding.figure == FigurePart::NotClaimed) add("no figure reported");
   if (finding.df_claimed == DfPart::AsClaimed) add("df as claimed");
   if (finding.df_claimed == DfPart::Differs) add("df differ");
-  const std::string level = " at " + level_text(finding.level);
+  const std::string level = finding.level == usual_level ? "" : " at " + level_text(finding.level);
   if (finding.decision == DecisionPart::Rejects) add("rejects" + level);
   if (finding.decision == DecisionPart::DoesNotReject) add("does not reject" + level);
   if (finding.decision == DecisionPart::Open) add("decision open" + level);
@@ -60,13 +68,14 @@ std::string parts_line(const Finding& finding, const std::string& p_printed) {
 struct Total {
   std::optional<State> state;  // absent: all
   const char* id;
-  const char* words;
+  const char* one;   // words after "1"
+  const char* many;  // and after any other number
 };
-constexpr Total kTotals[] = {{std::nullopt, "filter/all", "looked at"},
-                             {State::Agrees, "filter/agrees", "agree"},
-                             {State::Conflicts, "filter/conflicts", "not matching"},
-                             {State::Undecided, "filter/undecided", "open"},
-                             {State::NotComputable, "filter/not-computable", "without a test"}};
+constexpr Total kTotals[] = {{std::nullopt, "filter/all", "looked at", "looked at"},
+                             {State::Agrees, "filter/agrees", "agrees", "agree"},
+                             {State::Conflicts, "filter/conflicts", "does not match", "do not match"},
+                             {State::Undecided, "filter/undecided", "open", "open"},
+                             {State::NotComputable, "filter/not-computable", "without a test", "without a test"}};
 
 // How many there are of each state; pressing one shows these alone.
 Intent show_totals(const AppState& state, Hands& hands, Pen& pen) {
@@ -80,7 +89,7 @@ Intent show_totals(const AppState& state, Hands& hands, Pen& pen) {
     const int count =
         total.state ? counts[static_cast<size_t>(*total.state)] : static_cast<int>(state.checked.findings.size());
     if (total.state && count == 0 && state.only != total.state) continue;
-    const std::string words = std::to_string(count) + " " + total.words;
+    const std::string words = std::to_string(count) + " " + (count == 1 ? total.one : total.many);
     const float lead = total.state ? mark_size + px(6) : 0;
     const float width = lead + text_width(Type::Note, words) + px(14);
     if (x > pen.x && x + width > pen.right()) {
@@ -183,6 +192,12 @@ Intent show_card(const AppState& state, Hands& hands, int claim, Pen& pen) {
   draw_card(low, high, colours.card, chosen ? colours.ink : press.hovered ? colours.thin_rule : colours.edge, thick, px(6));
   if (press.held && !chosen) list->AddRectFilled(low, high, colours.hover, px(6));
   if (press.ring) draw_ring(low, high, px(6));
+  if (chosen && hands.view.claim_in_sight != claim) {
+    hands.view.claim_in_sight = claim;
+    ImGui::ScrollToRect(ImGui::GetCurrentWindow(), ImRect(ImVec2(low.x, low.y - px(16)), ImVec2(high.x, high.y + px(16))),
+                        ImGuiScrollFlags_KeepVisibleEdgeY);
+    request_frames(2);
+  }
 
   Pen inner{pen.x + px(kCardPad), pen.y + px(11), pen.width - 2 * px(kCardPad)};
   if (chosen && hands.view.editing_claim == claim) {
@@ -215,7 +230,7 @@ Intent show_card(const AppState& state, Hands& hands, int claim, Pen& pen) {
     draw_mark(mark_for(finding->state), accent(finding->state), ImVec2(inner.x + size / 2, inner.y + size / 2), size);
     Pen words{inner.x + size + gap, inner.y + (size - setting(Type::Note).leading) / 2, inner.width - size - gap};
     words.write(Type::Note, accent(finding->state), words_for(finding->state));
-    const std::string parts = parts_line(*finding, claim_text(state.document, claim, "p"));
+    const std::string parts = parts_line(*finding, claim_text(state.document, claim, "p"), state.review.level);
     if (!parts.empty()) words.write(Type::Small, colours.quiet, parts);
     if (finding->state == State::NotComputable && !finding->sentence.empty()) {
       words.write(Type::Small, colours.quiet, finding->sentence);
@@ -250,7 +265,7 @@ Intent show_claims(const AppState& state, Hands& hands, const ImVec2& low, const
     if (more.index() != 0) intent = std::move(more);
   };
 
-  draw_line(Type::NoteStrong, pen.at(), colours.soft, "Claims");
+  if (!hands.view.tabbed) draw_line(Type::NoteStrong, pen.at(), colours.soft, "Claims");
   const char* const add = "add a claim";
   const float add_width = button_size(add, ButtonKind::Quiet).x;
   if (show_button(hands, "button/add-claim", add, ImVec2(pen.right() - add_width + px(6), pen.y - px(3)), ButtonKind::Quiet)) {

@@ -192,7 +192,7 @@ std::optional<std::string> show_field(Hands& hands, const std::string& id, const
     if (hands.key(ImGuiKey_Escape, false)) {
       if (state.buffer.text() != state.at_start) answer = state.at_start;
       hands.stop_typing();
-    } else if (!style.enter_breaks && (hands.key(ImGuiKey_Enter, false) || hands.key(ImGuiKey_KeypadEnter, false))) {
+    } else if (!style.enter_breaks && !hands.command() && (hands.key(ImGuiKey_Enter, false) || hands.key(ImGuiKey_KeypadEnter, false))) {
       hands.stop_typing();
     }
   } else if (press.focused && hands.key(ImGuiKey_F2, false)) {
@@ -250,8 +250,13 @@ std::optional<std::string> show_field(Hands& hands, const std::string& id, const
   const ImU32 colour = style.colour ? style.colour : palette().ink;
   for (size_t i = 0; i < block.lines.size(); ++i) {
     const Line& line = block.lines[i];
-    draw_line(style.type, ImVec2(block.at.x, block.at.y + static_cast<float>(i) * leading), colour,
-              block.text.substr(line.begin, line.end - line.begin));
+    const ImVec2 at(block.at.x, block.at.y + static_cast<float>(i) * leading);
+    const std::string_view part = block.text.substr(line.begin, line.end - line.begin);
+    if (still) {
+      draw_line(style.type, at, colour, part);
+    } else {
+      draw_cut(style.type, at, colour, part, inner_high.x - inner_low.x + px(2));
+    }
   }
   if (style.point) {
     const size_t at = std::min(*style.point, shown.size());

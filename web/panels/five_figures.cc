@@ -101,9 +101,8 @@ Intent show_five_figures(const AppState&, Hands& hands, Pen& pen) {
     intent = figures_of(view);
     hands.stop_typing();
   }
-  const float next = pen.x + button_size("Begin a review with these").x + px(12);
-  draw_line(Type::Small, ImVec2(next, pen.y + px(6)), colours.quiet, "it takes the place of the review on the page; undo brings that back");
-  pen.y += button_size("x").y;
+  pen.y += button_size("x").y + px(6);
+  pen.write(Type::Small, colours.quiet, "It takes the place of the review on the page; undo brings that back.");
   return intent;
 }
 

@@ -122,12 +122,13 @@ CellAnswer show_cell(Hands& hands, const std::string& id, const std::string& val
     list->AddRect(ImVec2(box.low.x + thick / 2, box.low.y + thick / 2), ImVec2(box.high.x - thick / 2, box.high.y - thick / 2),
                   colours.ink, px(2), 0, thick);
   }
-  if (value.empty()) {
+  const std::string& shown = look.shown ? *look.shown : value;
+  if (shown.empty()) {
     if (look.hint[0] != '\0') draw_words(box, look.hint, colours.quiet);
   } else if (box.set == SetAt::Point) {
-    draw_figure(box, value, decimal);
+    draw_figure(box, shown, decimal);
   } else {
-    draw_words(box, value, box.colour);
+    draw_words(box, shown, box.colour);
   }
   if (!look.trouble.empty()) {
     // Marked by a query at the cell's side and an underline of dots; the reason is written beside it.

@@ -33,6 +33,7 @@ struct CellLook {
   bool rests = false;     // the chosen finding rests on it
   std::string trouble;    // why its text could not be read
   const char* hint = "";  // what an empty cell shows
+  const std::string* shown = nullptr;  // drawn in place of the value, while it is not being typed
 };
 
 // What the keys asked for: to leave the cell in a direction.

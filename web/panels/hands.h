@@ -98,8 +98,11 @@ class Hands {
   // ---- small things that a frame leaves for the next
   struct View {
     int editing_claim = -1;       // the card whose particulars are open
+    bool tabbed = false;          // one pane at a time, its name on its tab
     bool more_figures = false;    // the table's foot shows all it can hold
     int matrix_column = -1;       // the column whose covariances are shown; -1: the chosen claim's
+    int label_column = -1;        // the column whose label is being changed
+    int claim_in_sight = -2;      // the chosen card that was last scrolled into sight
     std::string new_term;         // the name being typed for a term to add
     int tick_form = 0;            // 0 all zero, 1 all equal, 2 adds up to
     int ticked_claim = -1;        // the card whose list of terms is open

@@ -18,13 +18,18 @@ namespace rejoinder {
 namespace {
 
 constexpr float kSide = 18;       // of the pane
-constexpr float kColumnPad = 10;  // on each side of a column's figures
+constexpr const char* kAddTerm = "add a term";
+constexpr float kColumnPad = 7;   // on each side of a column's figures
 
-// One column's measures: the widest text before and after the decimal point, and where the column stands.
+// One column's measures: the widest text before and after the decimal point, of the terms and of the foot, which
+// keep points of their own; and where the column stands.
 struct Measure {
-  float before = 0, after = 0;
+  struct Figures {
+    float before = 0, after = 0;
+  };
+  Figures terms, foot;
   float left = 0, width = 0;
-  float point() const { return left + (width - before - after) / 2 + before; }
+  float point(const Figures& figures) const { return left + (width - figures.before - figures.after) / 2 + figures.before; }
 };
 
 // The grid as the arrows see it: each line's stops, the name of the row first, "" where there is none.
@@ -54,14 +59,17 @@ struct Grid {
   Hands& hands;
   const PrintedTable table;
   const std::string second;  // the key of what stands under the coefficients
-  Intent intent;
-  Stops stops;
-  std::vector<Measure> measures;
-  std::optional<TableCell> pointed;  // the cell under the pointer
-  std::string moved_from;
-  CellMove move;
+  Intent intent = {};
+  Stops stops = {};
+  std::vector<Measure> measures = {};
+  std::optional<TableCell> pointed = {};  // the cell under the pointer
+  std::string moved_from = {};
+  CellMove move = {};
   float label_left = 0, label_width = 0;
-  ImVec2 clip_low, clip_high;  // of the figures, right of the names
+  bool tight = false;  // smaller type and less air, so that more columns fit
+  Type first() const { return tight ? Type::Note : Type::Body; }
+  Type second_type() const { return tight ? Type::Small : Type::Note; }
+  ImVec2 clip_low = {}, clip_high = {};  // of the figures, right of the names
 
   void take(const std::string& id, const CellAnswer& answer, const TableCell* cell) {
     if (answer.move.columns || answer.move.lines) {
@@ -77,7 +85,7 @@ struct Grid {
   std::string figure(int c, const TableCell& cell, const std::string& id, float y, float height, Type type, ImU32 colour,
                      bool brackets) {
     const Measure& m = measures[static_cast<size_t>(c)];
-    CellBox box{ImVec2(m.left, y), ImVec2(m.left + m.width, y + height), SetAt::Point, m.point(), type, colour, brackets};
+    CellBox box{ImVec2(m.left, y), ImVec2(m.left + m.width, y + height), SetAt::Point, m.point(cell.term < 0 ? m.foot : m.terms), type, colour, brackets};
     CellLook look;
     look.rests = rests_on(state, cell);
     look.trouble = trouble_in(state, cell);
@@ -89,7 +97,7 @@ struct Grid {
 const char* const kErrorsKeys[] = {"classical", "robust", "clustered", "unknown"};
 const std::vector<std::string> kErrorsWords = {"classical", "robust", "clustered", "not said"};
 const char* const kEstimatorKeys[] = {"ols", "iv", "ml", "other"};
-const std::vector<std::string> kEstimatorWords = {"least squares", "instruments", "likelihood", "another"};
+const std::vector<std::string> kEstimatorWords = {"OLS", "IV", "ML", "other"};
 const char* const kSecondKeys[] = {"se", "t", "p"};
 const std::vector<std::string> kSecondWords = {"standard error", "t", "p"};
 
@@ -104,12 +112,15 @@ int place_of(const char* const (&keys)[size], std::string_view key, int otherwis
 int errors_of(const AppState& state, int c) { return place_of(kErrorsKeys, column_text(state.document, c, "errors"), 3); }
 int estimator_of(const AppState& state, int c) { return place_of(kEstimatorKeys, column_text(state.document, c, "estimator"), 0); }
 
+// A column's label without the number that stands above it anyway.
 std::string heading_of(const AppState& state, int c) {
-  const std::string label = column_text(state.document, c, "label");
-  return label.empty() ? column_text(state.document, c, "id") : label;
+  std::string label = column_text(state.document, c, "label");
+  const std::string number = column_number(c);
+  if (label.starts_with(number)) label.erase(0, number.size());
+  return label.substr(std::min(label.find_first_not_of(" ,:"), label.size()));
 }
 
-void measure_figure(Measure& m, Type type, const std::string& text, char decimal, bool brackets) {
+void measure_figure(Measure::Figures& m, Type type, const std::string& text, char decimal, bool brackets) {
   if (text.empty()) return;
   const Aligned figure = split_at_point(text, decimal);
   if (!figure.numeric) {
@@ -121,34 +132,63 @@ void measure_figure(Measure& m, Type type, const std::string& text, char decimal
   m.after = std::max(m.after, text_width(type, figure.right) + bracket);
 }
 
-// Widths of all columns; what room is left goes to them in equal parts, up to a point.
-void measure(Grid& grid, float room) {
+// Of the widest single word, since words are not broken.
+float word_width(Type type, std::string_view text) {
+  float widest = 0;
+  for (size_t begin = 0; begin < text.size();) {
+    const size_t end = std::min(text.find(' ', begin), text.size());
+    widest = std::max(widest, text_width(type, text.substr(begin, end - begin)));
+    begin = end + 1;
+  }
+  return widest;
+}
+
+// Widths of all columns. Returns that of the whole table.
+float measure_columns(Grid& grid, float room) {
   const AppState& state = grid.state;
   const char decimal = state.review.decimal;
-  float widest = text_width(Type::Body, "errors");
-  for (const TermRow& row : grid.table.rows) widest = std::max(widest, text_width(Type::Body, row.name));
-  for (const FootRow& foot : grid.table.foot) widest = std::max(widest, text_width(Type::Body, foot.label));
-  grid.label_width = std::clamp(widest + px(14), px(110), std::max(px(110), room * (grid.table.columns > 2 ? 0.34f : 0.42f)));
-  grid.measures.resize(static_cast<size_t>(grid.table.columns));
-  float all = grid.label_width;
+  float widest = text_width(grid.first(), "errors"), word = px(70);
+  const auto name = [&](std::string_view text) {
+    widest = std::max(widest, text_width(grid.first(), text));
+    word = std::max(word, word_width(grid.first(), text));
+  };
+  for (const TermRow& row : grid.table.rows) name(row.name);
+  for (const FootRow& foot : grid.table.foot) name(foot.label);
+  word = std::max(word, text_width(Type::Body, kAddTerm));
+  const float least = std::min(word + px(16), room * 0.4f);
+  grid.label_width = std::clamp(widest + px(14), least, std::max(least, room * (grid.table.columns > 2 ? 0.34f : 0.42f)));
+  grid.measures.assign(static_cast<size_t>(grid.table.columns), {});
+  float all = 0;
   for (int c = 0; c < grid.table.columns; ++c) {
     Measure& m = grid.measures[static_cast<size_t>(c)];
     for (const TermRow& row : grid.table.rows) {
       const int term = row.term[static_cast<size_t>(c)];
       if (term < 0) continue;
-      measure_figure(m, Type::Body, text_in(state, {c, term, coefficient_key(state, c, term)}), decimal, false);
-      measure_figure(m, Type::Note, text_in(state, {c, term, grid.second}), decimal, true);
+      measure_figure(m.terms, grid.first(), text_in(state, {c, term, coefficient_key(state, c, term)}), decimal, false);
+      measure_figure(m.terms, grid.second_type(), text_in(state, {c, term, grid.second}), decimal, true);
     }
     for (const FootRow& foot : grid.table.foot) {
-      measure_figure(m, Type::Body, text_in(state, {c, -1, foot.key}), decimal, false);
+      measure_figure(m.foot, grid.first(), text_in(state, {c, -1, foot.key}), decimal, false);
     }
-    float needed = m.before + m.after;
-    needed = std::max(needed, std::min(text_width(Type::Note, heading_of(state, c)), px(96)));
-    needed = std::max(needed, chooser_size(kErrorsWords[static_cast<size_t>(errors_of(state, c))]).x);
-    m.width = std::ceil(std::max(needed, px(52)) + 2 * px(kColumnPad));
+    float needed = std::max({m.terms.before + m.terms.after, m.foot.before + m.foot.after, px(46)});
+    needed = std::max(needed, chooser_size(kErrorsWords[static_cast<size_t>(errors_of(state, c))], Type::Small).x - px(10));
+    m.width = std::ceil(needed + 2 * px(grid.tight ? 4 : kColumnPad));
     all += m.width;
   }
-  const float extra = std::clamp((room - all) / std::max(1, grid.table.columns), 0.0f, px(36));
+  // Names give way first: they can stand in two lines.
+  if (grid.label_width + all > room) grid.label_width = std::max(least, room - all);
+  return grid.label_width + all;
+}
+
+// What room is left goes to the columns in equal parts, up to a point.
+void measure(Grid& grid, float room) {
+  grid.tight = false;
+  float all = measure_columns(grid, room);
+  if (all > room) {
+    grid.tight = true;
+    all = measure_columns(grid, room);
+  }
+  const float extra = std::clamp((room - all) / static_cast<float>(std::max(1, grid.table.columns)), 0.0f, px(36));
   float x = grid.label_left + grid.label_width;
   for (Measure& m : grid.measures) {
     m.left = x;
@@ -168,7 +208,7 @@ void clip_to_figures(const Grid& grid) { ImGui::PushClipRect(grid.clip_low, grid
 void name_cell(Grid& grid, const std::string& id, const std::string& name, float y, float height, const CellAnswer*& answer,
                CellAnswer& store) {
   const float left = ImGui::GetWindowPos().x;
-  const CellBox box{ImVec2(left, y), ImVec2(left + grid.label_width - px(6), y + height), SetAt::Left, 0, Type::Body,
+  const CellBox box{ImVec2(left, y), ImVec2(left + grid.label_width - px(6), y + height), SetAt::Left, 0, grid.first(),
                     palette().ink, false};
   store = show_cell(grid.hands, id, name, box, {}, grid.state.review.decimal);
   answer = &store;
@@ -185,11 +225,19 @@ float show_headings(Grid& grid, float y) {
   Hands& hands = grid.hands;
   const Palette& colours = palette();
   const float line = setting(Type::Note).leading;
+  const std::string outcome = grid.table.columns > 0 ? column_text(state.document, 0, "outcome") : std::string();
+  bool same = true;
+  for (int c = 1; c < grid.table.columns; ++c) same = same && column_text(state.document, c, "outcome") == outcome;
+  // Labels below the numbers, where there are any.
+  bool labelled = false;
   float lines = 1;
   for (int c = 0; c < grid.table.columns; ++c) {
+    const std::string heading = heading_of(state, c);
     const float width = grid.measures[static_cast<size_t>(c)].width - px(8);
-    lines = std::max(lines, static_cast<float>(set_in_lines(Type::Note, heading_of(state, c), width).size()));
+    lines = std::max(lines, static_cast<float>(set_in_lines(Type::Note, heading, width).size()));
+    labelled = labelled || !heading.empty() || hands.on("column/" + std::to_string(c) + "/label");
   }
+  if (!labelled) lines = 0;
   y += px(4);
   clip_to_figures(grid);
   std::vector<std::string> stops = {""};
@@ -211,39 +259,69 @@ float show_headings(Grid& grid, float y) {
       items.owner = menu;
       items.low = low;
       items.high = high;
-      items.items = {"Covariances of its estimates", "-", "Take the column out"};
+      items.items = {"Change the label", "Covariances of its estimates", "-", "Take the column out"};
       hands.open_menu(items);
     }
     if (const std::optional<int> picked = hands.picked(menu)) {
-      if (*picked == 0) hands.view.matrix_column = c;
-      if (*picked == 2) grid.intent = RemoveColumn{c};
+      if (*picked == 0) {
+        hands.view.label_column = c;
+        const std::string label = column_text(state.document, c, "label");
+        hands.start_typing(id, label, EditBuffer(label, true));
+      }
+      if (*picked == 1) hands.view.matrix_column = c;
+      if (*picked == 3) grid.intent = RemoveColumn{c};
     }
+    if (!labelled) continue;
     const CellBox box{ImVec2(m.left, y + size.y), ImVec2(m.left + m.width, y + size.y + lines * line + px(2)), SetAt::Centre, 0,
                       Type::Note, colours.ink, false};
     CellLook look;
-    look.hint = "label";
-    const CellAnswer answer = show_cell(hands, id, heading_of(state, c), box, look, state.review.decimal);
+    const std::string heading = heading_of(state, c);
+    look.shown = &heading;
+    const CellAnswer answer = show_cell(hands, id, column_text(state.document, c, "label"), box, look, state.review.decimal);
     grid.take(id, answer, nullptr);
     if (answer.text) grid.intent = EditColumn{c, "label", *answer.text};
     stops.push_back(id);
   }
-  y += line + px(4) + lines * line + px(4);
   ImGui::PopClipRect();
-  const std::string outcome = grid.table.columns > 0 ? column_text(state.document, 0, "outcome") : std::string();
-  bool same = true;
-  for (int c = 1; c < grid.table.columns; ++c) same = same && column_text(state.document, c, "outcome") == outcome;
-  if (same && !outcome.empty()) plain_name(grid, outcome, y - line - px(4), Type::Note, colours.ink);
+  y += line + px(4) + lines * line + px(4);
+  // What is explained: once where all columns explain the same, else a line of its own.
+  if (same && !hands.view.more_figures) {
+    const float at = y - px(4) - (labelled ? line : line + px(2));
+    if (!outcome.empty()) plain_name(grid, outcome, at, Type::Note, colours.ink);
+    if (labelled) grid.stops.push_back(stops);
+    return y + px(2);
+  }
   grid.stops.push_back(stops);
-  return y + px(2);
+  plain_name(grid, "outcome", y + px(1), Type::Note, colours.quiet);
+  float outcome_lines = 1;
+  for (int c = 0; c < grid.table.columns; ++c) {
+    const float width = grid.measures[static_cast<size_t>(c)].width - px(8);
+    outcome_lines = std::max(outcome_lines, static_cast<float>(set_in_lines(Type::Note, column_text(state.document, c, "outcome"), width).size()));
+  }
+  const float height = outcome_lines * line + px(2);
+  clip_to_figures(grid);
+  std::vector<std::string> outcomes = {""};
+  for (int c = 0; c < grid.table.columns; ++c) {
+    const Measure& m = grid.measures[static_cast<size_t>(c)];
+    const std::string id = "column/" + std::to_string(c) + "/outcome";
+    const CellBox box{ImVec2(m.left, y), ImVec2(m.left + m.width, y + height), SetAt::Centre, 0, Type::Note, colours.quiet, false};
+    const CellAnswer answer = show_cell(hands, id, column_text(state.document, c, "outcome"), box, {}, state.review.decimal);
+    grid.take(id, answer, nullptr);
+    if (answer.text) grid.intent = EditColumn{c, "outcome", *answer.text};
+    outcomes.push_back(id);
+  }
+  ImGui::PopClipRect();
+  grid.stops.push_back(outcomes);
+  return y + height + px(3);
 }
 
 float show_term(Grid& grid, int row, float y) {
   const AppState& state = grid.state;
   const TermRow& term = grid.table.rows[static_cast<size_t>(row)];
   const Palette& colours = palette();
-  const float first = setting(Type::Body).leading + px(1), second = setting(Type::Note).leading + px(1);
+  const float first = setting(grid.first()).leading + px(1), second = setting(grid.second_type()).leading + px(1);
   const std::string name_id = "term/" + std::to_string(row);
-  const float name_height = text_height(Type::Body, term.name, grid.label_width - px(14)) + px(2);
+  const float name_height = text_height(grid.first(), term.name, grid.label_width - px(14)) + px(2);
   const float height = std::max(first + second, name_height);
 
   const CellAnswer* answer = nullptr;
@@ -273,7 +351,7 @@ float show_term(Grid& grid, int row, float y) {
       const std::string id = "cell/" + std::to_string(c) + "/" + std::to_string(at) + "/" + key;
       (part == 0 ? upper : lower)
           .push_back(grid.figure(c, cell, id, part == 0 ? y : y + first, part == 0 ? first : second,
-                                 part == 0 ? Type::Body : Type::Note, part == 0 ? colours.ink : colours.quiet, part == 1));
+                                 part == 0 ? grid.first() : grid.second_type(), part == 0 ? colours.ink : colours.quiet, part == 1));
     }
   }
   ImGui::PopClipRect();
@@ -286,15 +364,16 @@ float show_foot(Grid& grid, float y) {
   const AppState& state = grid.state;
   Hands& hands = grid.hands;
   const Palette& colours = palette();
-  const float height = setting(Type::Body).leading + px(2);
+  const float line = setting(grid.first()).leading + px(2);
   y += px(5);
   for (const FootRow& foot : grid.table.foot) {
-    plain_name(grid, foot.label, y + px(1), Type::Body, colours.ink);
+    const float height = text_height(grid.first(), foot.label, grid.label_width - px(12)) + px(2);
+    draw_text(grid.first(), ImVec2(ImGui::GetWindowPos().x + px(4), y + px(1)), colours.ink, foot.label, grid.label_width - px(12));
     clip_to_figures(grid);
     std::vector<std::string> stops = {""};
     for (int c = 0; c < grid.table.columns; ++c) {
-      stops.push_back(grid.figure(c, {c, -1, foot.key}, "cell/" + std::to_string(c) + "/foot/" + foot.key, y, height,
-                                  Type::Body, colours.ink, false));
+      stops.push_back(grid.figure(c, {c, -1, foot.key}, "cell/" + std::to_string(c) + "/foot/" + foot.key, y, line,
+                                  grid.first(), colours.ink, false));
     }
     ImGui::PopClipRect();
     grid.stops.push_back(stops);
@@ -303,23 +382,23 @@ float show_foot(Grid& grid, float y) {
   bool other_estimator = hands.view.more_figures;
   for (int c = 0; c < grid.table.columns; ++c) other_estimator = other_estimator || estimator_of(state, c) != 0;
   for (int part = 0; part < (other_estimator ? 2 : 1); ++part) {
-    plain_name(grid, part == 0 ? "errors" : "estimator", y + px(2), Type::Body, colours.ink);
+    plain_name(grid, part == 0 ? "errors" : "estimator", y + px(2), grid.first(), colours.ink);
     clip_to_figures(grid);
     for (int c = 0; c < grid.table.columns; ++c) {
       const Measure& m = grid.measures[static_cast<size_t>(c)];
       const std::vector<std::string>& words = part == 0 ? kErrorsWords : kEstimatorWords;
       const int chosen = part == 0 ? errors_of(state, c) : estimator_of(state, c);
       const std::string& shown = words[static_cast<size_t>(chosen)];
-      const float width = chooser_size(shown).x;
+      const float width = chooser_size(shown, Type::Small).x;
       const char* const key = part == 0 ? "errors" : "estimator";
       const int picked = show_chooser(hands, "column/" + std::to_string(c) + "/" + key, shown, words, chosen,
-                                      ImVec2(m.left + std::max(0.0f, (m.width - width) / 2), y + px(2)));
+                                      ImVec2(m.left + std::max(0.0f, (m.width - width) / 2), y + px(4)), Type::Small);
       if (picked >= 0 && picked != chosen) {
         grid.intent = EditColumn{c, key, part == 0 ? kErrorsKeys[picked] : kEstimatorKeys[picked]};
       }
     }
     ImGui::PopClipRect();
-    y += height + px(3);
+    y += line + px(3);
   }
   return y + px(5);
 }
@@ -363,9 +442,9 @@ Intent show_paper(const AppState& state, Hands& hands, const ImVec2& low, const 
   const float inner = high.x - low.x - 2 * px(kSide) - px(4);
   Pen pen{ImGui::GetCursorScreenPos().x + px(kSide), ImGui::GetCursorScreenPos().y + px(16), inner};
 
-  Grid grid{state, hands, printed_table(state, hands.view.more_figures), second_figure(state), {}, {}, {}, {}, {}, {}, 0, 0, {}, {}};
+  Grid grid{state, hands, printed_table(state, hands.view.more_figures), second_figure(state)};
   const float line = setting(Type::NoteStrong).leading;
-  draw_line(Type::NoteStrong, pen.at(), colours.soft, "From the paper");
+  if (!hands.view.tabbed) draw_line(Type::NoteStrong, pen.at(), colours.soft, "From the paper");
   {
     const std::string shown = second_figure_words(grid.second), label = "second figure: ";
     const ImVec2 size = chooser_size(shown);
@@ -389,7 +468,6 @@ Intent show_paper(const AppState& state, Hands& hands, const ImVec2& low, const 
   const ImVec2 corner = ImGui::GetCursorScreenPos();
   const float fixed_left = ImGui::GetWindowPos().x;
   grid.label_left = corner.x;
-  grid.measures.clear();
   measure(grid, inner);
   const float wide = sideways ? inner : std::max(table_width(grid), px(120));
   grid.clip_low = ImVec2(fixed_left + grid.label_width - px(6), corner.y);
@@ -404,7 +482,7 @@ Intent show_paper(const AppState& state, Hands& hands, const ImVec2& low, const 
   {
     FieldStyle style;
     style.frame = Frame::Bare;
-    style.hint = "add a term";
+    style.hint = kAddTerm;
     const ImVec2 field_low(fixed_left, y), field_high(fixed_left + grid.label_width - px(6), y + field_height(style, "", 0));
     const bool entered = hands.types_in("term/new") && (hands.sees(ImGuiKey_Enter) || hands.sees(ImGuiKey_KeypadEnter));
     if (const auto text = show_field(hands, "term/new", hands.view.new_term, field_low, field_high, style)) {

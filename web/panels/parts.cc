@@ -167,7 +167,7 @@ void show_menu(Hands& hands) {
   const Palette& colours = palette();
   const Type type = Type::Note;
   const float row = setting(type).leading + px(6), rule = px(9), edge = px(5);
-  float width = menu.high.x - menu.low.x, height = 2 * edge;
+  float width = menu.high.x - menu.low.x, height = 2 * edge + 2 * hair();
   for (const std::string& item : menu.items) {
     width = std::max(width, std::ceil(text_width(type, item)) + px(46));
     height += item == "-" ? rule : row;

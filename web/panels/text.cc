@@ -2,6 +2,8 @@
 
 #include <algorithm>
 
+#include "imgui_internal.h"
+
 namespace rejoinder {
 namespace {
 
@@ -16,6 +18,51 @@ float width_of(const TypeSetting& how, std::string_view text) {
   return how.font->CalcTextSizeA(how.size, FLT_MAX, 0, text.data(), text.data() + text.size()).x;
 }
 
+// A blank that must not end a line: "5 %", "p = .03" and "F < 1" stay together.
+bool holds_together(std::string_view text, size_t blank) {
+  const auto sign = [](char c) { return c == '=' || c == '<' || c == '>'; };
+  const char after = blank + 1 < text.size() ? text[blank + 1] : ' ';
+  if (after == '%' || sign(after)) return true;
+  if (blank >= 2 && text[blank - 1] == ',' && after >= '0' && after <= '9') {  // "F(2, 410)"
+    size_t at = blank - 1;
+    while (at > 0 && text[at - 1] >= '0' && text[at - 1] <= '9') --at;
+    if (at > 0 && text[at - 1] == '(') return true;
+  }
+  return blank >= 2 && sign(text[blank - 1]) && text[blank - 2] == ' ';
+}
+
+// Breaks text[begin, end) where it grows wider than `width`: at blanks, or inside a word that is wider than a line.
+void break_paragraph(const TypeSetting& how, bool together, std::string_view text, size_t begin, size_t end, float width,
+                     std::vector<Line>& lines) {
+  const float scale = how.size / how.font->FontSize;
+  size_t from = begin;                   // of the line
+  size_t blank = std::string_view::npos;  // the last place where it may be broken
+  float wide = 0;
+  for (size_t at = begin; at < end;) {
+    unsigned int letter = 0;
+    const int bytes = std::max(1, ImTextCharFromUtf8(&letter, text.data() + at, text.data() + end));
+    const float step = how.font->GetCharAdvance(static_cast<ImWchar>(letter)) * scale;
+    if (letter == ' ' && !(together && holds_together(text, at))) {
+      blank = at;
+    } else if (wide + step > width && at > from) {
+      const bool at_blank = blank != std::string_view::npos && blank >= from;
+      size_t stop = at_blank ? blank : at;
+      const size_t next = at_blank ? blank + 1 : at;
+      while (stop > from && text[stop - 1] == ' ') --stop;
+      lines.push_back({from, stop});
+      from = next;
+      while (from < end && text[from] == ' ') ++from;
+      blank = std::string_view::npos;
+      wide = 0;
+      at = from;
+      continue;
+    }
+    wide += step;
+    at += static_cast<size_t>(bytes);
+  }
+  lines.push_back({from, end});
+}
+
 }  // namespace
 
 std::vector<Line> set_in_lines(Type type, std::string_view text, float width) {
@@ -24,25 +71,11 @@ std::vector<Line> set_in_lines(Type type, std::string_view text, float width) {
   size_t begin = 0;
   while (true) {
     const size_t line_end = std::min(text.find('\n', begin), text.size());
-    // One paragraph of the text, broken where it grows too wide.
-    size_t from = begin;
-    while (width > 0 && from < line_end) {
-      const char* const first = text.data() + from;
-      const char* const stop =
-          how.font->CalcWordWrapPositionA(how.size / how.font->FontSize, first, text.data() + line_end, width);
-      size_t cut = static_cast<size_t>(stop - text.data());
-      if (cut >= line_end) break;
-      if (cut <= from) {  // not even one letter fits: take one all the same
-        cut = from + 1;
-        while (cut < line_end && (static_cast<unsigned char>(text[cut]) & 0xC0) == 0x80) ++cut;
-      }
-      size_t end = cut;
-      while (end > from && text[end - 1] == ' ') --end;
-      lines.push_back({from, end});
-      from = cut;
-      while (from < line_end && text[from] == ' ') ++from;
+    if (width > 0) {
+      break_paragraph(how, type != Type::Mono, text, begin, line_end, width, lines);
+    } else {
+      lines.push_back({begin, line_end});
     }
-    lines.push_back({from, line_end});
     if (line_end == text.size()) return lines;
     begin = line_end + 1;
   }

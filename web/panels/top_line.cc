@@ -125,7 +125,7 @@ Intent show_top_line(const AppState& state, Hands& hands, float width) {
   const std::string title = review_text(state.document, "title");
   const std::string measured =
       hands.types_in("review/title") ? hands.typing()->buffer.text() : title.empty() ? std::string(style.hint) : title;
-  const float widest = std::max(px(90), width * 0.22f);
+  const float widest = std::clamp(width * 0.24f, px(150), px(420));
   const float title_width = std::min(text_width(Type::Body, measured) + 2 * field_room(style).x + px(4), widest);
   const float field_top = (height - field_height(style, "", 0)) / 2;
   if (const auto typed = show_field(hands, "review/title", title, ImVec2(x, field_top),
@@ -138,7 +138,7 @@ Intent show_top_line(const AppState& state, Hands& hands, float width) {
   const std::vector<Action> actions = all_actions(state);
   const std::string more = "More";
   const float more_width = button_size(more).x;
-  const float status_room = width > px(1250) ? px(250) : 0;
+  const float status_room = width > px(1150) ? text_width(Type::Note, "kept on this machine, 00:00  ·  nothing is sent") + px(20) : 0;
   size_t shown = 0;
   float taken = side + more_width;
   while (shown < actions.size() - kAlwaysInMenu) {

@@ -50,6 +50,10 @@ void draw_row(const char* name, const std::vector<Interval>& sets, ImU32 tone, c
 
 }  // namespace
 
+bool has_correlation_line(const Finding& finding) {
+  return finding.correlation && finding.correlation->terms.size() == 2 && (has_figure_row(finding) || !finding.correlation->does_not_reject.empty());
+}
+
 float correlation_line_height(const Finding& finding) {
   return px(kRow) * (has_figure_row(finding) ? 2.0f : 1.0f) + px(2) + setting(Type::Small).leading;
 }
@@ -69,10 +73,9 @@ void draw_correlation_line(const Finding& finding, const ImVec2& at, float width
   y += px(kRow) + px(2);
   draw_line(Type::Small, ImVec2(at.x + left, y), colours.quiet, "−1");
   const float middle = at.x + left + (width - left) / 2;
-  const std::string name = sets.terms.size() == 2 ? "correlation of the estimates of " + sets.terms[0] + " and " + sets.terms[1]
-                                                  : "correlation of the two estimates";
-  const float wide = std::min(text_width(Type::Small, name), width - left - px(40));
-  draw_cut(Type::Small, ImVec2(middle - wide / 2, y), colours.quiet, name, width - left - px(36));
+  const std::string name = "correlation of " + sets.terms[0] + " and " + sets.terms[1];
+  const float room = width - left - px(60), wide = std::min(text_width(Type::Small, name), room);
+  draw_cut(Type::Small, ImVec2(middle - wide / 2, y), colours.quiet, name, room + 1);
   draw_line(Type::Small, ImVec2(at.x + width - text_width(Type::Small, "1"), y), colours.quiet, "1");
 }
 

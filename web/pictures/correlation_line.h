@@ -7,7 +7,9 @@
 
 namespace rejoinder {
 
-// Contract: finding.correlation.
+// False where the correlation decides nothing: the finding has none, or no value of it makes a difference.
+bool has_correlation_line(const Finding& finding);
+// Contract: has_correlation_line(finding).
 float correlation_line_height(const Finding& finding);
 void draw_correlation_line(const Finding& finding, const ImVec2& at, float width);
 
