@@ -126,6 +126,7 @@ bool all_slopes_zero(const Column& column, const Restrictions& restrictions) {
 }
 
 std::variant<JointTest, NoTest> without_column(JointTest test, const Claim& claim) {
+  test.basis = Basis::Sentence;
   NoTest none;
   if (!claim.df1) {
     none.reason = "The claim names no column and reports no degrees of freedom, so there is nothing to test it by.";
@@ -153,6 +154,9 @@ std::string column_name(const Column& column) {
 }
 
 std::variant<JointTest, NoTest> set_up_test(const Review& review, const Claim& claim) {
+  if (!claim.columns.empty()) return set_up_samples(review, claim);
+  if (!claim.source.empty()) return set_up_variance(review, claim);
+  if (!claim.pooled.empty() || !claim.parts.empty()) return set_up_break(review, claim);
   JointTest test;
   test.review = &review;
   test.claim = &claim;

@@ -15,10 +15,21 @@
 
 namespace rejoinder {
 
+// What the claim rests on, which says which routes may speak.
+enum class Basis {
+  Column,      // one column, perhaps against another
+  Samples,     // terms of several columns
+  Variance,    // a line of an analysis-of-variance table
+  Break,       // a pooled column against its parts
+  Sentence     // the sentence alone
+};
+
 struct JointTest {
+  Basis basis = Basis::Column;
   const Review* review = nullptr;
   const Claim* claim = nullptr;
-  const Column* column = nullptr;      // the column tested; null for a sentence that names none
+  const Column* column = nullptr;      // the column tested (of several: the first); null where the claim rests on none
+  std::vector<const Column*> columns;  // Samples: those the claim names; Break: the pooled column, then its parts
   const Column* restricted = nullptr;  // the nested column, where the claim compares two and the comparison can be made
   std::optional<Fit> restricted_fit;   // or its fit alone
   bool all_slopes = false;             // the restrictions set every slope of the column to zero
@@ -48,6 +59,11 @@ struct NoTest {
 
 // `claim` belongs to `review`; both must outlive the answer.
 std::variant<JointTest, NoTest> set_up_test(const Review& review, const Claim& claim);
+
+// The set-ups of the other bases, for set_up_test. Contract: the claim is of that kind.
+std::variant<JointTest, NoTest> set_up_samples(const Review& review, const Claim& claim);
+std::variant<JointTest, NoTest> set_up_variance(const Review& review, const Claim& claim);
+std::variant<JointTest, NoTest> set_up_break(const Review& review, const Claim& claim);
 
 // p of the statistic W at the test's df; one-sided p where the claim is one-sided.
 double p_of_wald(const JointTest& test, double wald);

@@ -77,10 +77,12 @@ Ask joint_test_itself(const JointTest& test) {
 
 std::vector<Ask> asks_for(const JointTest& test, const Finding& finding) {
   std::vector<Ask> out;
-  if (!test.column) {
+  if (test.basis != Basis::Column) {
     Ask ask = joint_test_itself(test);
-    ask.figure = "the reported statistic to one more digit";
-    ask.sentence = "Could the authors report the statistic and its p value to one more digit?";
+    if (test.basis == Basis::Sentence) {
+      ask.figure = "the reported statistic to one more digit";
+      ask.sentence = "Could the authors report the statistic and its p value to one more digit?";
+    }
     return {ask};
   }
   const Column& column = *test.column;

@@ -118,7 +118,7 @@ void lens_of_exclusion(Finding& finding, const JointTest& test, const Reported& 
 }  // namespace
 
 std::optional<Interval> turning_correlation(const JointTest& test) {
-  if (!test.column || !test.restrictions) return std::nullopt;
+  if (test.basis != Basis::Column || !test.restrictions) return std::nullopt;
   const ColumnSet set = column_set(test, {false, false});
   const std::optional<Pair> pair = pair_of(test, set);
   if (!pair) return std::nullopt;
@@ -132,7 +132,7 @@ std::optional<Interval> turning_correlation(const JointTest& test) {
 }
 
 void add_correlation_lens(Finding& finding, const JointTest& test, const Reported& said) {
-  if (!test.column || !test.restrictions) return;
+  if (test.basis != Basis::Column || !test.restrictions) return;
   // A fit or a covariance already says what the correlation would: the lens is for what the print leaves open.
   if (std::none_of(finding.evidence.begin(), finding.evidence.end(), [](const Evidence& e) { return e.route == Route::Estimates; })) return;
   const ColumnSet set = column_set(test);

@@ -9,6 +9,8 @@
 #include "core/evidence/likelihood.h"
 #include "core/evidence/overall_f.h"
 #include "core/evidence/printed_test.h"
+#include "core/evidence/samples.h"
+#include "core/evidence/sums_of_squares.h"
 #include "core/judge/correlation_lens.h"
 #include "core/judge/reported.h"
 #include "core/number/number_text.h"
@@ -50,6 +52,33 @@ bool any_hard(const std::vector<Clash>& clashes) {
   return std::any_of(clashes.begin(), clashes.end(), [](const Clash& c) { return !c.mild; });
 }
 
+// Every route that may speak of what the claim rests on; the sentence against itself only where none bounds the statistic and no
+// comparison is refused.
+Gathered gather(const JointTest& test) {
+  Gathered all;
+  switch (test.basis) {
+    case Basis::Column:
+      take(all, fit_evidence(test));
+      take(all, column_evidence(test));
+      take(all, facts_evidence(test));
+      take(all, nested_columns_evidence(test));
+      take(all, overall_f_evidence(test));
+      take(all, likelihood_evidence(test));
+      break;
+    case Basis::Samples:
+      take(all, samples_evidence(test));
+      break;
+    case Basis::Variance:
+    case Basis::Break:
+      take(all, sums_of_squares_evidence(test));
+      break;
+    case Basis::Sentence:
+      break;
+  }
+  if (all.evidence.empty() && test.refused_comparison.empty() && !any_hard(all.clashes)) take(all, printed_test_evidence(test));
+  return all;
+}
+
 // Two routes that share no value. Where the kind of errors is not stated the conventional formula is the one that may not
 // apply; otherwise the print contradicts itself.
 bool drop_formula_of_unknown_errors(const JointTest& test, Gathered& all) {
@@ -78,12 +107,11 @@ State state_of(FigurePart figure, const DfCheck& df, DecisionPart decision, cons
   return State::Agrees;
 }
 
-void not_computable(Finding& finding, const Claim& claim) {
+void not_computable(Finding& finding) {
   finding.state = State::NotComputable;
   finding.figure = FigurePart::NotComputable;
   finding.decision = DecisionPart::NotComputable;
   finding.df_claimed = DfPart::NotStated;
-  (void)claim;
 }
 
 // Figures of the claim itself for the picture, on the scale of the finding's statistic.
@@ -114,7 +142,7 @@ Judged judge(const Review& review, const Claim& claim) {
 
   auto set_up = set_up_test(review, claim);
   if (const NoTest* none = std::get_if<NoTest>(&set_up)) {
-    not_computable(finding, claim);
+    not_computable(finding);
     finding.q = none->q;
     if (finding.restrictions.empty()) finding.restrictions = none->in_words;
     finding.ask = none->asks;
@@ -128,14 +156,7 @@ Judged judge(const Review& review, const Claim& claim) {
   finding.statistic = test.statistic;
   finding.assumes = test.assumes;
 
-  Gathered all;
-  take(all, fit_evidence(test));
-  take(all, column_evidence(test));
-  take(all, facts_evidence(test));
-  take(all, nested_columns_evidence(test));
-  take(all, overall_f_evidence(test));
-  take(all, likelihood_evidence(test));
-  if (all.evidence.empty() && test.refused_comparison.empty() && !any_hard(all.clashes)) take(all, printed_test_evidence(test));
+  Gathered all = gather(test);
   append(finding.cautions, test.cautions);
   if (!test.refused_comparison.empty()) finding.cautions.push_back(test.refused_comparison);
 
@@ -160,7 +181,10 @@ Judged judge(const Review& review, const Claim& claim) {
     } else if (reason.empty()) {
       reason = "Nothing printed bears on the tested terms: the claim needs coefficients with standard errors, two fits, or the test itself.";
     }
-    not_computable(finding, claim);
+    not_computable(finding);
+    const DfCheck df = check_df(test);
+    finding.df_claimed = df.part;
+    finding.df_says = df.says;
     finding.evidence = std::move(all.evidence);
     finding.ask = test.asks;
     finding.ask.insert(finding.ask.end(), all.asks.begin(), all.asks.end());

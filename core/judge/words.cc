@@ -135,6 +135,15 @@ std::string used_words(const Finding& finding, const JointTest* test) {
       case Route::Facts: piece = "the coefficients of " + columns + " and the printed combinations of them"; break;
       case Route::Likelihood: piece = "the log-likelihoods of " + columns + " and of the restricted fit"; break;
       case Route::PrintedTest: piece = "the reported figures alone"; break;
+      case Route::NestedColumns: piece = "the coefficients of " + columns + " and their changes between columns"; break;
+      case Route::Samples: {
+        std::string names;
+        for (const Column* column : test->columns) names += (names.empty() ? "" : " and ") + column_name(*column);
+        piece = "the coefficients and standard errors of " + names;
+        break;
+      }
+      case Route::SumsOfSquares: piece = test->basis == Basis::Break ? "the residual sums of squares of the pooled column and its parts"
+                                                                     : std::string("the sums of squares of the analysis-of-variance table"); break;
       default: piece = std::string("the route ") + contract_word(e.route); break;
     }
     out += (out.empty() ? "" : " and ") + piece;
