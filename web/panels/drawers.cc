@@ -4,12 +4,14 @@
 
 #include "core/number/number_text.h"
 #include "imgui_internal.h"
+#include "web/pictures/shift.h"
 #include "web/platform/marks.h"
 
 namespace rejoinder {
 namespace {
 
-constexpr float kIndent = 2;
+constexpr float kIndent = 2;  // of the sign
+constexpr float kInset = 21;  // of what the drawer holds
 
 // A head with what is in the drawer said at its right; returns whether the drawer is open.
 bool show_head(const AppState& state, Hands& hands, Pen& pen, Drawer drawer, const char* id, const char* title,
@@ -32,7 +34,7 @@ bool show_head(const AppState& state, Hands& hands, Pen& pen, Drawer drawer, con
   if (!open) {
     list->AddRectFilled(ImVec2(sign_x - thick / 2, middle - arm), ImVec2(sign_x + thick / 2, middle + arm), colours.quiet);
   }
-  const float text_x = sign_x + arm + px(10);
+  const float text_x = pen.x + px(kInset);
   draw_line(Type::Strong, ImVec2(text_x, pen.y + px(8)), colours.ink, title);
   const float title_end = text_x + text_width(Type::Strong, title) + px(14);
   const float room = pen.right() - title_end;
@@ -43,10 +45,18 @@ bool show_head(const AppState& state, Hands& hands, Pen& pen, Drawer drawer, con
   }
   if (press.pressed) intent = ToggleDrawer{drawer};
   pen.y += height;
+  if (open) {  // what lies in the drawer stands in line with its title
+    pen.x += px(kInset);
+    pen.width -= px(kInset);
+  }
   return open;
 }
 
-void close_drawer(Pen& pen) { pen.skip(12); }
+void close_drawer(Pen& pen) {
+  pen.skip(12);
+  pen.x -= px(kInset);
+  pen.width += px(kInset);
+}
 
 void write_mono(Pen& pen, const std::vector<std::string>& lines) {
   const Palette& colours = palette();
@@ -133,13 +143,14 @@ void show_asks(const Finding& finding, Pen& pen) {
     Pen line{pen.x + px(22), pen.y, pen.width - px(22)};
     draw_line(Type::NoteStrong, pen.at(), colours.quiet, lead);
     line.write(Type::NoteStrong, colours.ink, ask.figure);
-    if (ask.turns_at) {
+    const bool told = ask.figure.find("turns at") != std::string::npos;
+    if (ask.turns_at && !told) {
       const bool point = number_text(ask.turns_at->low) == number_text(ask.turns_at->high);
       line.write(Type::Note, colours.soft,
                  point ? "the decision turns at " + number_text(ask.turns_at->low)
                        : "the decision turns between " + number_text(ask.turns_at->low, ShowRounding::Down) + " and " +
                              number_text(ask.turns_at->high, ShowRounding::Up));
-    } else if (ask.decides) {
+    } else if (ask.decides && !told) {
       line.write(Type::Note, colours.soft, "would leave one decision only");
     }
     if (!ask.sentence.empty()) line.write(Type::Note, colours.quiet, "“" + ask.sentence + "”");
@@ -204,6 +215,16 @@ Intent show_drawers(const AppState& state, Hands& hands, const Finding& finding,
   if (show_head(state, hands, pen, Drawer::Evidence, "drawer/evidence", "What it rests on", routes, intent)) {
     if (finding.evidence.empty()) pen.write(Type::Note, colours.soft, "No printed figure bears on this claim.");
     show_evidence(finding, pen);
+    if (hands.view.shift_claim != state.claim) {
+      hands.view.shift_claim = state.claim;
+      hands.view.shift = -1;
+    }
+    if (const Shift shift = shift_of(state, state.claim); !shift.rows.empty()) {
+      pen.skip(4);
+      const float height = shift_height(shift, pen.width);
+      show_shift(shift, hands, pen.at(), pen.width);
+      pen.y += height;
+    }
     close_drawer(pen);
   }
   if (finding.state != State::Undecided && finding.state != State::NotComputable) settle();

@@ -11,15 +11,6 @@ namespace {
 
 bool is_digit(char c) { return c >= '0' && c <= '9'; }
 
-// Shown only: a hyphen that stands for a minus is drawn as one. The text itself is never touched.
-std::string with_minus(std::string text) {
-  const size_t at = text.find_first_not_of("([ ");
-  if (at != std::string::npos && text[at] == '-' && at + 1 < text.size() && (is_digit(text[at + 1]) || text[at + 1] == '.')) {
-    text.replace(at, 1, "−");
-  }
-  return text;
-}
-
 void draw_words(const CellBox& box, std::string_view text, ImU32 colour) {
   const float width = box.high.x - box.low.x - px(8), leading = setting(box.type).leading;
   float y = box.low.y + px(1);
@@ -79,6 +70,14 @@ Aligned split_at_point(std::string text, char decimal) {
   split.left = text.substr(0, at);
   split.right = text.substr(at);
   return split;
+}
+
+std::string with_minus(std::string text) {
+  const size_t at = text.find_first_not_of("([ ");
+  if (at != std::string::npos && text[at] == '-' && at + 1 < text.size() && (is_digit(text[at + 1]) || text[at + 1] == '.')) {
+    text.replace(at, 1, "−");
+  }
+  return text;
 }
 
 CellAnswer show_cell(Hands& hands, const std::string& id, const std::string& value, const CellBox& box, const CellLook& look,

@@ -16,6 +16,8 @@ struct Aligned {
   bool numeric = false;
 };
 Aligned split_at_point(std::string text, char decimal);
+// For drawing only: a hyphen that stands for a minus is drawn as one.
+std::string with_minus(std::string text);
 
 // How a cell is set: figures with their decimal points at point_x, headings centred, names of terms from the left, both in as
 // many lines as they need.

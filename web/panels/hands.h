@@ -105,6 +105,8 @@ class Hands {
     int claim_in_sight = -2;      // the chosen card that was last scrolled into sight
     std::string new_term;         // the name being typed for a term to add
     int tick_form = 0;            // 0 all zero, 1 all equal, 2 adds up to
+    double shift = -1;            // standard errors every coefficient is let move; negative: where it turns
+    int shift_claim = -1;         // of this claim
     int ticked_claim = -1;        // the card whose list of terms is open
     std::array<std::string, 5> five;  // coefficient, s.e., coefficient, s.e., n, as typed
     bool five_equal = false;          // the claim on them: equal, else both zero

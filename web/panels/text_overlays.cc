@@ -43,6 +43,7 @@ struct Preview {
   float label_width = 0, column_width = 0;
   float left = 0;
   size_t columns = 0;
+  std::vector<float> after;  // the widest text after the decimal point, for each column
 
   float x_of(int column) const { return left + label_width + static_cast<float>(column) * column_width; }
 };
@@ -51,7 +52,7 @@ void draw_cell(const Preview& preview, const PastedCell& cell, int column, float
   if (cell.empty() || column < 0) return;
   const Palette& colours = palette();
   const float right = preview.x_of(column + 1) - px(8), line = setting(type).leading;
-  std::string text = cell.text;
+  std::string text = with_minus(cell.text);
   if (!brackets.empty() && text.find_first_of("([") == std::string::npos) text = "(" + text + ")";
   const float width = std::min(text_width(type, text), preview.column_width - px(10));
   if (!cell.doubt.empty()) {
@@ -60,6 +61,14 @@ void draw_cell(const Preview& preview, const PastedCell& cell, int column, float
     ImGui::GetWindowDrawList()->AddRect(low, high, colours.rests_edge, px(2), 0, hair());
     draw_line(Type::SmallStrong, ImVec2(low.x + px(3), y), colours.undecided, "?");
     if (ImGui::IsMouseHoveringRect(low, high)) show_hint(cell.doubt, low, high);
+  }
+  // Figures stand with their decimal points in line where the column has room for that.
+  const Aligned figure = split_at_point(text, preview.table.decimal);
+  const float point = right - preview.after[static_cast<size_t>(column)], left = point - text_width(type, figure.left);
+  if (figure.numeric && left >= preview.x_of(column)) {
+    draw_line(type, ImVec2(left, y), colour, figure.left);
+    draw_line(type, ImVec2(point, y), colour, figure.right);
+    return;
   }
   draw_cut(type, ImVec2(right - width, y), colour, text, preview.column_width - px(10));
 }
@@ -94,8 +103,18 @@ void show_table_preview(const AppState& state, Hands& hands, Pen& pen, Intent& i
   for (const std::string& doubt : table.doubts) pen.write(Type::Small, colours.undecided, doubt);
   pen.skip(8);
 
-  Preview preview{table, 0, 0, pen.x, std::max<size_t>(table.columns.size(), 1)};
-  for (const PastedRow& row : table.rows) preview.columns = std::max(preview.columns, row.cells.size());
+  Preview preview{table, 0, 0, pen.x, std::max<size_t>(table.columns.size(), 1), {}};
+  for (const PastedRow& row : table.rows) {
+    preview.columns = std::max(preview.columns, row.cells.size());
+    for (const int column : row.more_column) preview.columns = std::max(preview.columns, static_cast<size_t>(std::max(column, 0)) + 1);
+  }
+  preview.after.assign(preview.columns, 0);
+  for (const PastedRow& row : table.rows) {
+    for (size_t c = 0; c < row.cells.size(); ++c) {
+      const Aligned figure = split_at_point(row.cells[c].text, table.decimal);
+      if (figure.numeric) preview.after[c] = std::max(preview.after[c], text_width(Type::Note, figure.right));
+    }
+  }
   for (const PastedRow& row : table.rows) preview.label_width = std::max(preview.label_width, text_width(Type::Note, row.label));
   preview.label_width = std::clamp(preview.label_width + px(10), px(60), pen.width * 0.38f);
   preview.column_width = std::min(px(110), (pen.width - preview.label_width) / static_cast<float>(preview.columns));
@@ -184,7 +203,7 @@ Intent show_paste_box(const AppState& state, Hands& hands, Pen& pen) {
       right.write(Type::Note, colours.quiet, state.box_text.empty() ? "What is understood appears here, cell by cell." : state.box_note);
       break;
   }
-  if (able && !state.box_note.empty()) {
+  if (able && !state.box_note.empty() && state.reading.kind != BoxReading::Kind::Table) {
     right.skip(6);
     right.write(Type::Small, colours.undecided, state.box_note);
   }
