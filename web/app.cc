@@ -31,10 +31,14 @@ AppState state;
 Hands hands;
 bool companion_is_stale = true;
 std::string told_notice;  // the last notice that was announced
+std::vector<OtherReview> others;
 
 std::string mime_of(const std::string& name) {
   const std::string_view ending = std::string_view(name).substr(std::min(name.rfind('.'), name.size()));
-  return ending == ".html" ? "text/html" : ending == ".svg" ? "image/svg+xml" : ending == ".toml" ? "application/toml" : "text/plain";
+  return ending == ".html"   ? "text/html"
+         : ending == ".svg"  ? "image/svg+xml"
+         : ending == ".toml" ? "application/toml"
+                             : "text/plain";
 }
 
 void carry_out(const Intent& intent) {
@@ -42,12 +46,24 @@ void carry_out(const Intent& intent) {
   const Overlay before = state.overlay;
   for (const Effect& effect : update(state, intent)) {
     switch (effect.kind) {
-      case Effect::Kind::Copy: copy_to_clipboard(effect.text); break;
-      case Effect::Kind::Download: offer_download(effect.name, mime_of(effect.name), effect.text); break;
-      case Effect::Kind::PickFile: pick_file(); break;
-      case Effect::Kind::Print: print_page(); break;
-      case Effect::Kind::OpenReport: open_report(effect.text); break;
-      case Effect::Kind::KeepNow: keep_soon(); break;
+      case Effect::Kind::Copy:
+        copy_to_clipboard(effect.text);
+        break;
+      case Effect::Kind::Download:
+        offer_download(effect.name, mime_of(effect.name), effect.text);
+        break;
+      case Effect::Kind::PickFile:
+        pick_file();
+        break;
+      case Effect::Kind::Print:
+        print_page();
+        break;
+      case Effect::Kind::OpenReport:
+        open_report(effect.text);
+        break;
+      case Effect::Kind::KeepNow:
+        keep_soon();
+        break;
     }
   }
   // Five figures make a review of their own, and their sheet has done its work.
@@ -55,6 +71,7 @@ void carry_out(const Intent& intent) {
   // An overlay takes the focus for itself, and gives it back to nothing in particular.
   if (state.overlay != before) hands.give_focus("", false);
   companion_is_stale = true;
+  ++hands.view.changes;
   request_frames(2);
 }
 
@@ -67,6 +84,20 @@ void adopt_look() {
     told_notice = state.notice;
     if (!told_notice.empty()) announce(told_notice);
   }
+}
+
+// The kept reviews of other visits, by title and time.
+std::vector<OtherReview> named(const std::vector<KeptReview>& kept) {
+  std::vector<OtherReview> names;
+  for (const KeptReview& review : kept) {
+    const Result<Node> stored = read_document(review.text);
+    const Node* const text = stored.ok() ? stored.value().find("review") : nullptr;
+    const Result<Node> document = text ? read_document(text->text) : stored;
+    const std::string title = document.ok() ? review_text(document.value(), "title") : std::string();
+    names.push_back(
+        {review.slot, (title.empty() ? "a review without a title" : title) + ", " + review.kept_at});
+  }
+  return names;
 }
 
 // A line between two panes that can be moved; returns how far the pointer took it.
@@ -92,9 +123,15 @@ Intent show_panes(float width, float top, float bottom) {
     take(show_tabs(state, hands, ImVec2(0, top), width));
     const ImVec2 low(0, top + tabs_height()), high(width, bottom);
     switch (state.pane) {
-      case Pane::Paper: take(show_paper(state, hands, low, high)); break;
-      case Pane::Claims: take(show_claims(state, hands, low, high)); break;
-      case Pane::Allows: take(show_allows(state, hands, low, high)); break;
+      case Pane::Paper:
+        take(show_paper(state, hands, low, high));
+        break;
+      case Pane::Claims:
+        take(show_claims(state, hands, low, high));
+        break;
+      case Pane::Allows:
+        take(show_allows(state, hands, low, high));
+        break;
     }
     return intent;
   }
@@ -104,21 +141,25 @@ Intent show_panes(float width, float top, float bottom) {
   take(show_allows(state, hands, ImVec2(right, top), ImVec2(width, bottom)));
   // Drawn last, so that the dividers lie over the panes.
   ImGui::SetCursorScreenPos(ImVec2(left - px(5), top));
-  ImGui::BeginChild("dividers-left", ImVec2(px(10), bottom - top), 0, ImGuiWindowFlags_NoNav | ImGuiWindowFlags_NoScrollWithMouse);
+  ImGui::BeginChild("dividers-left", ImVec2(px(10), bottom - top), 0,
+                    ImGuiWindowFlags_NoNav | ImGuiWindowFlags_NoScrollWithMouse);
   const float by_left = show_divider("divider/left", left, top, bottom);
   ImGui::EndChild();
   ImGui::SetCursorScreenPos(ImVec2(right - px(5), top));
-  ImGui::BeginChild("dividers-right", ImVec2(px(10), bottom - top), 0, ImGuiWindowFlags_NoNav | ImGuiWindowFlags_NoScrollWithMouse);
+  ImGui::BeginChild("dividers-right", ImVec2(px(10), bottom - top), 0,
+                    ImGuiWindowFlags_NoNav | ImGuiWindowFlags_NoScrollWithMouse);
   const float by_right = show_divider("divider/right", right, top, bottom);
   ImGui::EndChild();
-  if (by_left != 0 || by_right != 0) intent = SetShares{state.left_share + by_left / width, state.right_share - by_right / width};
+  if (by_left != 0 || by_right != 0)
+    intent = SetShares{state.left_share + by_left / width, state.right_share - by_right / width};
   return intent;
 }
 
 // Keys that work wherever the focus is, after everything else had its chance.
 Intent global_keys() {
   if (hands.menu()) return {};
-  if (hands.key(ImGuiKey_F1, false)) return ShowOverlay{state.overlay == Overlay::Keys ? Overlay::None : Overlay::Keys};
+  if (hands.key(ImGuiKey_F1, false))
+    return ShowOverlay{state.overlay == Overlay::Keys ? Overlay::None : Overlay::Keys};
   if (!hands.command()) return {};
   if (hands.key(ImGuiKey_Z)) {
     hands.stop_typing();
@@ -141,6 +182,7 @@ bool app_start(const StartInfo& info) {
   ImGui::GetCurrentContext()->ConfigNavWindowingKeyNext = 0;
   ImGui::GetCurrentContext()->ConfigNavWindowingKeyPrev = 0;
   state = first_state(info.kept);
+  others = named(info.others);
   if (info.kept.empty() && prefers_dark()) state.theme = Theme::Dark;
   if (!info.linked.empty()) carry_out(LoadText{"", info.linked});
   return state.set_aside.empty();
@@ -155,10 +197,11 @@ void app_draw(const FrameInfo& frame) {
   ImGui::SetNextWindowSize(ImVec2(frame.width, frame.height));
   ImGui::Begin("page", nullptr,
                ImGuiWindowFlags_NoDecoration | ImGuiWindowFlags_NoMove | ImGuiWindowFlags_NoSavedSettings |
-                   ImGuiWindowFlags_NoBringToFrontOnFocus | ImGuiWindowFlags_NoNav | ImGuiWindowFlags_NoScrollWithMouse);
+                   ImGuiWindowFlags_NoBringToFrontOnFocus | ImGuiWindowFlags_NoNav |
+                   ImGuiWindowFlags_NoScrollWithMouse);
   ImGui::GetWindowDrawList()->AddRectFilled(ImVec2(0, 0), ImVec2(frame.width, frame.height), palette().desk);
   std::vector<Intent> intents;
-  intents.push_back(show_top_line(state, hands, frame.width));
+  intents.push_back(show_top_line(state, hands, others, frame.width));
   intents.push_back(show_panes(frame.width, top_line_height(), frame.height));
   ImGui::End();
   intents.push_back(show_overlay(state, hands));

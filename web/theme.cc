@@ -13,8 +13,8 @@ constexpr ImU32 colour(unsigned rgb, unsigned alpha = 255) {
   return IM_COL32((rgb >> 16) & 255, (rgb >> 8) & 255, rgb & 255, alpha);
 }
 
-// The accents are darker (on paper) and lighter (on slate) relatives of the palette of Okabe and Ito that stays
-// distinct under the common colour-vision deficiencies (from memory).
+// The accents are darker (on paper) and lighter (on slate) relatives of the palette of Okabe and Ito that
+// stays distinct under the common colour-vision deficiencies (from memory).
 constexpr Palette kLight = {
     .paper = colour(0xFBFAF7),
     .desk = colour(0xF3F1EB),
@@ -76,20 +76,28 @@ const Palette& palette() { return *current; }
 
 ImU32 accent(State state) {
   switch (state) {
-    case State::Agrees: return current->agrees;
-    case State::Conflicts: return current->conflicts;
-    case State::Undecided: return current->undecided;
-    case State::NotComputable: break;
+    case State::Agrees:
+      return current->agrees;
+    case State::Conflicts:
+      return current->conflicts;
+    case State::Undecided:
+      return current->undecided;
+    case State::NotComputable:
+      break;
   }
   return current->none;
 }
 
 ImU32 accent(Match match) {
   switch (match) {
-    case Match::Fits: return current->agrees;
-    case Match::Strained: return current->undecided;
-    case Match::Conflicts: return current->conflicts;
-    case Match::CannotTell: break;
+    case Match::Fits:
+      return current->agrees;
+    case Match::Strained:
+      return current->undecided;
+    case Match::Conflicts:
+      return current->conflicts;
+    case Match::CannotTell:
+      break;
   }
   return current->none;
 }

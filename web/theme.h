@@ -1,11 +1,12 @@
 // The look of the page: colours, type, spacing. Every measure on the page comes from here.
 //
-// Lengths are design pixels: CSS pixels at a text scale of 1. px() turns them into pixels of the window, grown by
-// the text scale and set on the device's own grid, so that a hairline is never smeared over two rows.
+// Lengths are design pixels: CSS pixels at a text scale of 1. px() turns them into pixels of the window,
+// grown by the text scale and set on the device's own grid, so that a hairline is never smeared over two
+// rows.
 #pragma once
 
-#include "imgui.h"
 #include "core/judge/finding.h"
+#include "imgui.h"
 #include "web/model/state.h"
 
 namespace rejoinder {
@@ -27,8 +28,8 @@ struct Palette {
   ImU32 inset;      // ground of working and other set-apart text
   ImU32 rests;      // ground of the printed cells that the chosen finding rests on
   ImU32 rests_edge;
-  ImU32 selection;  // of text in a field
-  ImU32 shade;      // over the page below an overlay
+  ImU32 selection;                           // of text in a field
+  ImU32 shade;                               // over the page below an overlay
   ImU32 agrees, conflicts, undecided, none;  // never alone: mark and words always stand beside them
 };
 
@@ -42,15 +43,15 @@ ImU32 faded(ImU32 colour, float share);
 
 // Type: five sizes, two weights, one face of equal width.
 enum class Type {
-  Small,        // labels inside pictures, units
+  Small,  // labels inside pictures, units
   SmallStrong,
-  Note,         // labels, second figures, buttons
-  NoteStrong,   // heads of panes
+  Note,        // labels, second figures, buttons
+  NoteStrong,  // heads of panes
   Body,
-  Strong,       // heads of drawers
-  Large,        // heads of overlays
-  Title,        // the answer
-  Mono          // restrictions and working
+  Strong,  // heads of drawers
+  Large,   // heads of overlays
+  Title,   // the answer
+  Mono     // restrictions and working
 };
 
 // The face of a style, the size it is drawn at and the distance between its lines, in CSS pixels.

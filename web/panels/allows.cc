@@ -22,8 +22,10 @@ void show_answer(const Finding& finding, Pen& pen) {
   std::string below;
   if (finding.df && finding.f) {
     below = finding.statistic == Statistic::ChiSquare
-                ? "with " + df_text(finding.df->numerator) + (finding.df->numerator == 1 ? " degree" : " degrees") + " of freedom"
-                : "with " + df_text(finding.df->numerator) + " and " + df_text(finding.df->denominator) + " degrees of freedom";
+                ? "with " + df_text(finding.df->numerator) +
+                      (finding.df->numerator == 1 ? " degree" : " degrees") + " of freedom"
+                : "with " + df_text(finding.df->numerator) + " and " + df_text(finding.df->denominator) +
+                      " degrees of freedom";
     if (finding.p) below += ", so p is " + p_range_text(*finding.p);
     below += ".";
     if (finding.critical) {
@@ -47,16 +49,18 @@ void show_parts(const Finding& finding, Pen& pen) {
     const char* name;
     std::string says;
   };
-  const Part parts[] = {{"figure", finding.figure_says},
-                        {"degrees of freedom", finding.df_says},
-                        {finding.decision == DecisionPart::NotComputable ? "decision" : "", finding.decision_says}};
+  const Part parts[] = {
+      {"figure", finding.figure_says},
+      {"degrees of freedom", finding.df_says},
+      {finding.decision == DecisionPart::NotComputable ? "decision" : "", finding.decision_says}};
   const std::string decision = "decision at " + level_text(finding.level);
   const Palette& colours = palette();
   const bool beside = pen.width >= px(400);
   const float gap = px(8), width = beside ? (pen.width - 2 * gap) / 3 : pen.width, pad = px(10);
   float tallest = 0;
   const auto height_of = [&](const Part& part) {
-    return setting(Type::Small).leading + px(2) + text_height(Type::Note, part.says, width - 2 * pad) + px(15);
+    return setting(Type::Small).leading + px(2) + text_height(Type::Note, part.says, width - 2 * pad) +
+           px(15);
   };
   for (const Part& part : parts) tallest = std::max(tallest, height_of(part));
   float x = pen.x;
@@ -99,17 +103,20 @@ void show_problems(const AppState& state, Pen& pen) {
   const Palette& colours = palette();
   if (state.review.problems.empty()) return;
   pen.write(Type::NoteStrong, colours.soft,
-            state.review.problems.size() == 1 ? "One thing could not be read"
-                                              : std::to_string(state.review.problems.size()) + " things could not be read");
+            state.review.problems.size() == 1
+                ? "One thing could not be read"
+                : std::to_string(state.review.problems.size()) + " things could not be read");
   pen.skip(4);
   int shown = 0;
   for (const Problem& problem : state.review.problems) {
     if (++shown > 12) {
-      pen.write(Type::Small, colours.quiet, "and " + std::to_string(state.review.problems.size() - 12) + " more.");
+      pen.write(Type::Small, colours.quiet,
+                "and " + std::to_string(state.review.problems.size() - 12) + " more.");
       break;
     }
     pen.write(Type::Note, colours.soft, problem.key);
-    pen.write(Type::Small, colours.quiet, problem.mend.empty() ? problem.what : problem.what + "; " + problem.mend);
+    pen.write(Type::Small, colours.quiet,
+              problem.mend.empty() ? problem.what : problem.what + "; " + problem.mend);
     pen.skip(4);
   }
   pen.skip(10);
@@ -147,7 +154,8 @@ Intent show_allows(const AppState& state, Hands& hands, const ImVec2& low, const
     show_parts(finding, pen);
     pen.skip(12);
     if (has_null_curve(finding)) {
-      const std::string printed = claim_text(state.document, state.claim, finding.statistic == Statistic::F ? "f" : "chi2");
+      const std::string printed =
+          claim_text(state.document, state.claim, finding.statistic == Statistic::F ? "f" : "chi2");
       const float height = std::min(px(196), std::max(px(150), pen.width * 0.42f));
       const ImVec2 corner(pen.right(), pen.y + height);
       draw_card(pen.at(), corner, colours.card, colours.edge, hair(), px(5));
@@ -170,13 +178,16 @@ Intent show_allows(const AppState& state, Hands& hands, const ImVec2& low, const
     pen.write(Type::Title, colours.ink, "Nothing is claimed yet");
     pen.skip(4);
     pen.write(Type::Body, colours.soft,
-              "Enter what the paper prints on the left and what it claims in the middle. Two coefficients, their standard errors and n "
+              "Enter what the paper prints on the left and what it claims in the middle. Two coefficients, "
+              "their standard errors and n "
               "are enough for a first answer; every further figure narrows it.");
     pen.skip(12);
     float x = pen.x;
-    if (show_button(hands, "button/start-five", "Type five figures", ImVec2(x, pen.y))) intent = ShowOverlay{Overlay::FiveFigures};
+    if (show_button(hands, "button/start-five", "Type five figures", ImVec2(x, pen.y)))
+      intent = ShowOverlay{Overlay::FiveFigures};
     x += button_size("Type five figures").x + px(8);
-    if (show_button(hands, "button/start-paste", "Paste a table", ImVec2(x, pen.y))) intent = ShowOverlay{Overlay::PasteBox};
+    if (show_button(hands, "button/start-paste", "Paste a table", ImVec2(x, pen.y)))
+      intent = ShowOverlay{Overlay::PasteBox};
     pen.y += button_size("x").y + px(16);
   }
   take(show_audit_drawer(state, hands, pen));

@@ -1,5 +1,6 @@
-// The right pane, "What the print allows": everything about the chosen claim. The answer first and largest, then why,
-// its three parts, the picture, on what it rests, and drawers for what one may want to know besides.
+// The right pane, "What the print allows": everything about the chosen claim. The answer first and largest,
+// then why, its three parts, the picture, on what it rests, and drawers for what one may want to know
+// besides.
 #pragma once
 
 #include "web/model/intent.h"

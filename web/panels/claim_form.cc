@@ -71,10 +71,12 @@ struct Form {
     draw_line(Type::Note, ImVec2(at.x, at.y + px(4)), palette().soft, words);
     at.x += lead;
     const ImVec2 low(at.x, at.y + px(3)), high(at.x + wide, at.y + flow.line() - px(2));
-    if (const auto typed = show_field(hands, id(key), value, low, high, style)) intent = EditClaim{claim, key, *typed};
+    if (const auto typed = show_field(hands, id(key), value, low, high, style))
+      intent = EditClaim{claim, key, *typed};
   }
 
-  int choice(Flow& flow, const char* key, const std::string& shown, const std::vector<std::string>& items, int chosen) {
+  int choice(Flow& flow, const char* key, const std::string& shown, const std::vector<std::string>& items,
+             int chosen) {
     const ImVec2 at = flow.room(chooser_size(shown).x);
     return show_chooser(hands, id(key), shown, items, chosen, ImVec2(at.x, at.y + px(4)));
   }
@@ -112,7 +114,8 @@ void show_ticks(Form& form, Pen& pen) {
     if (ticks.form == forms[i]) chosen = i;
   }
   const int column = column_of_claim(form.state.document, form.claim);
-  std::vector<std::string> terms = column < 0 ? all_term_names(form.state.document) : term_names(form.state.document, column);
+  std::vector<std::string> terms =
+      column < 0 ? all_term_names(form.state.document) : term_names(form.state.document, column);
 
   Flow flow(pen);
   for (const std::string& term : terms) {
@@ -155,7 +158,8 @@ Intent show_claim_form(const AppState& state, Hands& hands, int claim, Pen& pen)
   sentence.hint = "the sentence, word for word";
   const std::string says = form.text("says");
   const float height = field_height(sentence, says, pen.width);
-  if (const auto typed = show_field(hands, form.id("says"), says, pen.at(), ImVec2(pen.right(), pen.y + height), sentence)) {
+  if (const auto typed =
+          show_field(hands, form.id("says"), says, pen.at(), ImVec2(pen.right(), pen.y + height), sentence)) {
     form.intent = EditClaim{claim, "says", *typed};
   }
   pen.y += height + px(8);
@@ -170,14 +174,14 @@ Intent show_claim_form(const AppState& state, Hands& hands, int claim, Pen& pen)
   std::optional<Error> trouble;
   if (!restrictions.empty()) {
     const int column = column_of_claim(state.document, claim);
-    const Result<Restrictions> read =
-        read_restrictions(restrictions, column < 0 ? std::vector<std::string>{} : term_names(state.document, column));
+    const Result<Restrictions> read = read_restrictions(
+        restrictions, column < 0 ? std::vector<std::string>{} : term_names(state.document, column));
     if (!read.ok()) trouble = read.error();
   }
   if (trouble) mono.point = pointed_byte(restrictions, trouble->where);
   const float mono_height = field_height(mono, restrictions, pen.width);
-  if (const auto typed =
-          show_field(hands, form.id("restrictions"), restrictions, pen.at(), ImVec2(pen.right(), pen.y + mono_height), mono)) {
+  if (const auto typed = show_field(hands, form.id("restrictions"), restrictions, pen.at(),
+                                    ImVec2(pen.right(), pen.y + mono_height), mono)) {
     form.intent = EditClaim{claim, "restrictions", *typed};
   }
   pen.y += mono_height + px(4);
@@ -186,8 +190,8 @@ Intent show_claim_form(const AppState& state, Hands& hands, int claim, Pen& pen)
     pen.skip(2);
   }
   const bool open = hands.view.ticked_claim == claim;
-  if (show_button(hands, form.id("ticks"), open ? "hide the list of terms" : "tick terms instead", ImVec2(pen.x - px(6), pen.y),
-                  ButtonKind::Quiet)) {
+  if (show_button(hands, form.id("ticks"), open ? "hide the list of terms" : "tick terms instead",
+                  ImVec2(pen.x - px(6), pen.y), ButtonKind::Quiet)) {
     hands.view.ticked_claim = open ? -1 : claim;
   }
   pen.y += button_size("x", ButtonKind::Quiet).y + px(2);
@@ -201,7 +205,8 @@ Intent show_claim_form(const AppState& state, Hands& hands, int claim, Pen& pen)
   const int in = column_at(state, form.text("column"));
   if (count > 0) {
     flow.words("in column");
-    const int picked = form.choice(flow, "column", in < 0 ? "choose one" : columns[static_cast<size_t>(in)], columns, in);
+    const int picked =
+        form.choice(flow, "column", in < 0 ? "choose one" : columns[static_cast<size_t>(in)], columns, in);
     if (picked >= 0) form.intent = EditClaim{claim, "column", column_text(state.document, picked, "id")};
     flow.words("against");
     std::vector<std::string> others = {"no other column", "-"};
@@ -210,7 +215,8 @@ Intent show_claim_form(const AppState& state, Hands& hands, int claim, Pen& pen)
     const std::string shown = against < 0 ? others[0] : columns[static_cast<size_t>(against)];
     const int other = form.choice(flow, "restricted", shown, others, against < 0 ? 0 : against + 2);
     if (other == 0) form.intent = EditClaim{claim, "restricted", ""};
-    if (other >= 2) form.intent = EditClaim{claim, "restricted", column_text(state.document, other - 2, "id")};
+    if (other >= 2)
+      form.intent = EditClaim{claim, "restricted", column_text(state.document, other - 2, "id")};
   }
   flow.end();
   Flow reported(pen);

@@ -1,5 +1,5 @@
-// The particulars of a claim, written as a sentence with blanks to fill in: what it restricts, on which column it
-// rests, what the paper reports.
+// The particulars of a claim, written as a sentence with blanks to fill in: what it restricts, on which
+// column it rests, what the paper reports.
 #pragma once
 
 #include "web/model/intent.h"

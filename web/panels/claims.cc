@@ -53,8 +53,10 @@ std::string p_words(const std::string& printed) {
 std::string parts_line(const Finding& finding, const std::string& p_printed, double usual_level) {
   std::string line;
   const auto add = [&](const std::string& part) { line += (line.empty() ? "" : "  ·  ") + part; };
-  if (finding.figure == FigurePart::WithinLimits) add(finding.reported ? "figure within limits" : p_words(p_printed) + " within limits");
-  if (finding.figure == FigurePart::OutsideLimits) add(finding.reported ? "figure outside limits" : p_words(p_printed) + " outside limits");
+  if (finding.figure == FigurePart::WithinLimits)
+    add(finding.reported ? "figure within limits" : p_words(p_printed) + " within limits");
+  if (finding.figure == FigurePart::OutsideLimits)
+    add(finding.reported ? "figure outside limits" : p_words(p_printed) + " outside limits");
   if (finding.figure == FigurePart::NotClaimed) add("no figure reported");
   if (finding.df_claimed == DfPart::AsClaimed) add("df as claimed");
   if (finding.df_claimed == DfPart::Differs) add("df differ");
@@ -71,11 +73,12 @@ struct Total {
   const char* one;   // words after "1"
   const char* many;  // and after any other number
 };
-constexpr Total kTotals[] = {{std::nullopt, "filter/all", "looked at", "looked at"},
-                             {State::Agrees, "filter/agrees", "agrees", "agree"},
-                             {State::Conflicts, "filter/conflicts", "does not match", "do not match"},
-                             {State::Undecided, "filter/undecided", "open", "open"},
-                             {State::NotComputable, "filter/not-computable", "without a test", "without a test"}};
+constexpr Total kTotals[] = {
+    {std::nullopt, "filter/all", "looked at", "looked at"},
+    {State::Agrees, "filter/agrees", "agrees", "agree"},
+    {State::Conflicts, "filter/conflicts", "does not match", "do not match"},
+    {State::Undecided, "filter/undecided", "open", "open"},
+    {State::NotComputable, "filter/not-computable", "without a test", "without a test"}};
 
 // How many there are of each state; pressing one shows these alone.
 Intent show_totals(const AppState& state, Hands& hands, Pen& pen) {
@@ -86,8 +89,8 @@ Intent show_totals(const AppState& state, Hands& hands, Pen& pen) {
   const float line = setting(Type::Note).leading + px(6), mark_size = px(15);
   float x = pen.x;
   for (const Total& total : kTotals) {
-    const int count =
-        total.state ? counts[static_cast<size_t>(*total.state)] : static_cast<int>(state.checked.findings.size());
+    const int count = total.state ? counts[static_cast<size_t>(*total.state)]
+                                  : static_cast<int>(state.checked.findings.size());
     if (total.state && count == 0 && state.only != total.state) continue;
     const std::string words = std::to_string(count) + " " + (count == 1 ? total.one : total.many);
     const float lead = total.state ? mark_size + px(6) : 0;
@@ -107,7 +110,8 @@ Intent show_totals(const AppState& state, Hands& hands, Pen& pen) {
     if (total.state) {
       draw_mark(mark_for(*total.state), accent(*total.state), ImVec2(x + mark_size / 2, middle), mark_size);
     }
-    draw_line(Type::Note, ImVec2(x + lead, pen.y + px(3)), only && total.state ? colours.ink : colours.quiet, words);
+    draw_line(Type::Note, ImVec2(x + lead, pen.y + px(3)), only && total.state ? colours.ink : colours.quiet,
+              words);
     if (only && (total.state || state.only)) {
       draw_rule(ImVec2(x, high.y - px(2)), width - px(14), px(1.5f), colours.ink);
     }
@@ -189,19 +193,25 @@ Intent show_card(const AppState& state, Hands& hands, int claim, Pen& pen) {
   }
 
   const float thick = chosen ? px(2) : hair();
-  draw_card(low, high, colours.card, chosen ? colours.ink : press.hovered ? colours.thin_rule : colours.edge, thick, px(6));
+  draw_card(low, high, colours.card,
+            chosen          ? colours.ink
+            : press.hovered ? colours.thin_rule
+                            : colours.edge,
+            thick, px(6));
   if (press.held && !chosen) list->AddRectFilled(low, high, colours.hover, px(6));
   if (press.ring) draw_ring(low, high, px(6));
   if (chosen && hands.view.claim_in_sight != claim) {
     hands.view.claim_in_sight = claim;
-    ImGui::ScrollToRect(ImGui::GetCurrentWindow(), ImRect(ImVec2(low.x, low.y - px(16)), ImVec2(high.x, high.y + px(16))),
+    ImGui::ScrollToRect(ImGui::GetCurrentWindow(),
+                        ImRect(ImVec2(low.x, low.y - px(16)), ImVec2(high.x, high.y + px(16))),
                         ImGuiScrollFlags_KeepVisibleEdgeY);
     request_frames(2);
   }
 
   Pen inner{pen.x + px(kCardPad), pen.y + px(11), pen.width - 2 * px(kCardPad)};
   if (chosen && hands.view.editing_claim == claim) {
-    if (Intent changed = show_claim_form(state, hands, claim, inner); changed.index() != 0) intent = std::move(changed);
+    if (Intent changed = show_claim_form(state, hands, claim, inner); changed.index() != 0)
+      intent = std::move(changed);
     inner.skip(4);
   } else {
     const std::string says = claim_text(state.document, claim, "says");
@@ -217,7 +227,8 @@ Intent show_card(const AppState& state, Hands& hands, int claim, Pen& pen) {
     }
   }
   if (finding) {
-    const std::string printed = claim_text(state.document, claim, finding->statistic == Statistic::F ? "f" : "chi2");
+    const std::string printed =
+        claim_text(state.document, claim, finding->statistic == Statistic::F ? "f" : "chi2");
     const float span = span_height(*finding, printed, inner.width);
     if (span > 0) {
       inner.skip(7);
@@ -227,10 +238,13 @@ Intent show_card(const AppState& state, Hands& hands, int claim, Pen& pen) {
     }
     inner.skip(8);
     const float size = px(22), gap = px(9);
-    draw_mark(mark_for(finding->state), accent(finding->state), ImVec2(inner.x + size / 2, inner.y + size / 2), size);
-    Pen words{inner.x + size + gap, inner.y + (size - setting(Type::Note).leading) / 2, inner.width - size - gap};
+    draw_mark(mark_for(finding->state), accent(finding->state),
+              ImVec2(inner.x + size / 2, inner.y + size / 2), size);
+    Pen words{inner.x + size + gap, inner.y + (size - setting(Type::Note).leading) / 2,
+              inner.width - size - gap};
     words.write(Type::Note, accent(finding->state), words_for(finding->state));
-    const std::string parts = parts_line(*finding, claim_text(state.document, claim, "p"), state.review.level);
+    const std::string parts =
+        parts_line(*finding, claim_text(state.document, claim, "p"), state.review.level);
     if (!parts.empty()) words.write(Type::Small, colours.quiet, parts);
     if (finding->state == State::NotComputable && !finding->sentence.empty()) {
       words.write(Type::Small, colours.quiet, finding->sentence);
@@ -239,7 +253,8 @@ Intent show_card(const AppState& state, Hands& hands, int claim, Pen& pen) {
   }
   if (chosen) {
     inner.skip(6);
-    if (Intent acted = show_actions(state, hands, claim, inner); acted.index() != 0) intent = std::move(acted);
+    if (Intent acted = show_actions(state, hands, claim, inner); acted.index() != 0)
+      intent = std::move(acted);
     inner.skip(-4);
   }
   const float height = snap(inner.y + px(11) - pen.y);
@@ -268,7 +283,8 @@ Intent show_claims(const AppState& state, Hands& hands, const ImVec2& low, const
   if (!hands.view.tabbed) draw_line(Type::NoteStrong, pen.at(), colours.soft, "Claims");
   const char* const add = "add a claim";
   const float add_width = button_size(add, ButtonKind::Quiet).x;
-  if (show_button(hands, "button/add-claim", add, ImVec2(pen.right() - add_width + px(6), pen.y - px(3)), ButtonKind::Quiet)) {
+  if (show_button(hands, "button/add-claim", add, ImVec2(pen.right() - add_width + px(6), pen.y - px(3)),
+                  ButtonKind::Quiet)) {
     intent = AddClaim{""};
     hands.view.editing_claim = count_of(state.document, "claim");
     hands.give_focus("claim/" + std::to_string(hands.view.editing_claim) + "/says");
@@ -289,9 +305,10 @@ Intent show_claims(const AppState& state, Hands& hands, const ImVec2& low, const
   }
   if (count == 0) {
     pen.skip(8);
-    pen.write(Type::Body, colours.soft,
-              "Copy the sentence that reports a joint test out of the paper and paste it anywhere on this page. "
-              "“F(2, 410) = 4.21, p = .015” fills itself in.");
+    pen.write(
+        Type::Body, colours.soft,
+        "Copy the sentence that reports a joint test out of the paper and paste it anywhere on this page. "
+        "“F(2, 410) = 4.21, p = .015” fills itself in.");
     pen.skip(6);
     pen.write(Type::Note, colours.quiet, "Or add a claim and write what it says of the coefficients.");
   } else if (shown == 0) {

@@ -1,5 +1,5 @@
-// The middle pane, "Claims": one card a claim, with its sentence, its restriction, its span and its state, and above
-// them how many were looked at, so that one conflict among ten is seen as one among ten.
+// The middle pane, "Claims": one card a claim, with its sentence, its restriction, its span and its state,
+// and above them how many were looked at, so that one conflict among ten is seen as one among ten.
 #pragma once
 
 #include "web/model/intent.h"

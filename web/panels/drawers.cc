@@ -14,8 +14,8 @@ constexpr float kIndent = 2;  // of the sign
 constexpr float kInset = 21;  // of what the drawer holds
 
 // A head with what is in the drawer said at its right; returns whether the drawer is open.
-bool show_head(const AppState& state, Hands& hands, Pen& pen, Drawer drawer, const char* id, const char* title,
-               const std::string& aside, Intent& intent) {
+bool show_head(const AppState& state, Hands& hands, Pen& pen, Drawer drawer, const char* id,
+               const char* title, const std::string& aside, Intent& intent) {
   const Palette& colours = palette();
   const bool open = state.open_drawers.contains(drawer);
   pen.rule(colours.hairline);
@@ -30,9 +30,11 @@ bool show_head(const AppState& state, Hands& hands, Pen& pen, Drawer drawer, con
   ImDrawList* const list = ImGui::GetWindowDrawList();
   const float arm = px(4.5f), thick = px(1.4f), middle = snap(pen.y + height / 2);
   const float sign_x = pen.x + px(kIndent) + arm;
-  list->AddRectFilled(ImVec2(sign_x - arm, middle - thick / 2), ImVec2(sign_x + arm, middle + thick / 2), colours.quiet);
+  list->AddRectFilled(ImVec2(sign_x - arm, middle - thick / 2), ImVec2(sign_x + arm, middle + thick / 2),
+                      colours.quiet);
   if (!open) {
-    list->AddRectFilled(ImVec2(sign_x - thick / 2, middle - arm), ImVec2(sign_x + thick / 2, middle + arm), colours.quiet);
+    list->AddRectFilled(ImVec2(sign_x - thick / 2, middle - arm), ImVec2(sign_x + thick / 2, middle + arm),
+                        colours.quiet);
   }
   const float text_x = pen.x + px(kInset);
   draw_line(Type::Strong, ImVec2(text_x, pen.y + px(8)), colours.ink, title);
@@ -69,12 +71,14 @@ void write_mono(Pen& pen, const std::vector<std::string>& lines) {
     const size_t lead = std::min(line.find_first_not_of(' '), line.size());
     const std::vector<Line> parts = set_in_lines(Type::Mono, line, width - hang);
     for (size_t i = 0; i < parts.size(); ++i) {
-      const float indent = i == 0 ? 0 : std::min(hang + text_width(Type::Mono, line.substr(0, lead)), width / 3);
+      const float indent =
+          i == 0 ? 0 : std::min(hang + text_width(Type::Mono, line.substr(0, lead)), width / 3);
       shown.emplace_back(line.substr(parts[i].begin, parts[i].end - parts[i].begin), indent);
     }
   }
   height += static_cast<float>(shown.size()) * setting(Type::Mono).leading;
-  ImGui::GetWindowDrawList()->AddRectFilled(pen.at(), ImVec2(pen.right(), pen.y + height), colours.inset, px(4));
+  ImGui::GetWindowDrawList()->AddRectFilled(pen.at(), ImVec2(pen.right(), pen.y + height), colours.inset,
+                                            px(4));
   float y = pen.y + px(7);
   for (const auto& [text, indent] : shown) {
     draw_line(Type::Mono, ImVec2(pen.x + side + indent, y), colours.soft, text);
@@ -85,10 +89,14 @@ void write_mono(Pen& pen, const std::vector<std::string>& lines) {
 
 const char* words_for(Sharpness sharpness) {
   switch (sharpness) {
-    case Sharpness::Exact: return "attained by some table that prints so";
-    case Sharpness::Guaranteed: return "guaranteed, perhaps a touch wide";
-    case Sharpness::Estimated: return "estimated";
-    case Sharpness::NotBounded: break;
+    case Sharpness::Exact:
+      return "attained by some table that prints so";
+    case Sharpness::Guaranteed:
+      return "guaranteed, perhaps a touch wide";
+    case Sharpness::Estimated:
+      return "estimated";
+    case Sharpness::NotBounded:
+      break;
   }
   return "not bounded by this route";
 }
@@ -124,9 +132,11 @@ void show_evidence(const Finding& finding, Pen& pen) {
     }
     if (evidence.binds && finding.evidence.size() > 1) quality += "; gives the finding an end";
     line.write(Type::Small, colours.quiet, quality);
-    for (const std::string& assumed : evidence.assumes) line.write(Type::Small, colours.quiet, "assumes " + assumed);
+    for (const std::string& assumed : evidence.assumes)
+      line.write(Type::Small, colours.quiet, "assumes " + assumed);
     // A stroke at the side ties the lines of one route together.
-    draw_rule(ImVec2(pen.x, top + px(2)), px(2), line.y - top - px(4), evidence.binds ? colours.ink : colours.control);
+    draw_rule(ImVec2(pen.x, top + px(2)), px(2), line.y - top - px(4),
+              evidence.binds ? colours.ink : colours.control);
     pen.y = line.y + px(8);
   }
 }
@@ -148,8 +158,8 @@ void show_asks(const Finding& finding, Pen& pen) {
       const bool point = number_text(ask.turns_at->low) == number_text(ask.turns_at->high);
       line.write(Type::Note, colours.soft,
                  point ? "the decision turns at " + number_text(ask.turns_at->low)
-                       : "the decision turns between " + number_text(ask.turns_at->low, ShowRounding::Down) + " and " +
-                             number_text(ask.turns_at->high, ShowRounding::Up));
+                       : "the decision turns between " + number_text(ask.turns_at->low, ShowRounding::Down) +
+                             " and " + number_text(ask.turns_at->high, ShowRounding::Up));
     } else if (ask.decides && !told) {
       line.write(Type::Note, colours.soft, "would leave one decision only");
     }
@@ -166,12 +176,15 @@ void show_slips(const Finding& finding, Pen& pen) {
     pen.skip(6);
   }
   if (finding.slips_tried > 0) {
-    const std::string tried = std::to_string(finding.slips_tried) + (finding.slips_tried == 1 ? " slip" : " slips") + " tried";
+    const std::string tried =
+        std::to_string(finding.slips_tried) + (finding.slips_tried == 1 ? " slip" : " slips") + " tried";
     pen.write(Type::Small, colours.quiet,
-              finding.slips.empty() ? tried + "; none gives the reported figure." : tried + ". Each is a question, never a proof.");
+              finding.slips.empty() ? tried + "; none gives the reported figure."
+                                    : tried + ". Each is a question, never a proof.");
   } else if (finding.slips.empty()) {
-    pen.write(Type::Note, colours.soft, finding.state == State::Conflicts ? "No ordinary slip was found that gives the reported figure."
-                                                                          : "There is no misfit to explain.");
+    pen.write(Type::Note, colours.soft,
+              finding.state == State::Conflicts ? "No ordinary slip was found that gives the reported figure."
+                                                : "There is no misfit to explain.");
   }
 }
 
@@ -183,17 +196,20 @@ Intent show_drawers(const AppState& state, Hands& hands, const Finding& finding,
 
   // What could explain it comes first where there is something to explain.
   const auto explain = [&] {
-    std::string aside = finding.slips.empty() ? (finding.state == State::Conflicts ? "nothing found" : "nothing to explain")
-                                              : finding.slips.front().kind;
+    std::string aside = finding.slips.empty()
+                            ? (finding.state == State::Conflicts ? "nothing found" : "nothing to explain")
+                            : finding.slips.front().kind;
     if (finding.slips.size() > 1) aside += " and " + std::to_string(finding.slips.size() - 1) + " more";
-    if (show_head(state, hands, pen, Drawer::WhatCouldExplain, "drawer/explain", "What could explain it?", aside, intent)) {
+    if (show_head(state, hands, pen, Drawer::WhatCouldExplain, "drawer/explain", "What could explain it?",
+                  aside, intent)) {
       show_slips(finding, pen);
       close_drawer(pen);
     }
   };
   const auto settle = [&] {
     const std::string aside = finding.ask.empty() ? "nothing more is needed" : finding.ask.front().figure;
-    if (show_head(state, hands, pen, Drawer::WhatWouldSettle, "drawer/settle", "What would settle it", aside, intent)) {
+    if (show_head(state, hands, pen, Drawer::WhatWouldSettle, "drawer/settle", "What would settle it", aside,
+                  intent)) {
       show_asks(finding, pen);
       close_drawer(pen);
     }
@@ -201,7 +217,8 @@ Intent show_drawers(const AppState& state, Hands& hands, const Finding& finding,
   if (finding.state == State::Conflicts) explain();
   if (finding.state == State::Undecided || finding.state == State::NotComputable) settle();
 
-  const std::string lines = finding.working.empty() ? "nothing was computed" : std::to_string(finding.working.size()) + " lines";
+  const std::string lines =
+      finding.working.empty() ? "nothing was computed" : std::to_string(finding.working.size()) + " lines";
   if (show_head(state, hands, pen, Drawer::Working, "drawer/working", "Working", lines, intent)) {
     if (finding.working.empty()) {
       pen.write(Type::Note, colours.soft, "Nothing was computed for this claim.");
@@ -211,9 +228,11 @@ Intent show_drawers(const AppState& state, Hands& hands, const Finding& finding,
     close_drawer(pen);
   }
   std::string routes;
-  for (const Evidence& evidence : finding.evidence) routes += (routes.empty() ? "" : ", ") + std::string(contract_word(evidence.route));
+  for (const Evidence& evidence : finding.evidence)
+    routes += (routes.empty() ? "" : ", ") + std::string(contract_word(evidence.route));
   if (show_head(state, hands, pen, Drawer::Evidence, "drawer/evidence", "What it rests on", routes, intent)) {
-    if (finding.evidence.empty()) pen.write(Type::Note, colours.soft, "No printed figure bears on this claim.");
+    if (finding.evidence.empty())
+      pen.write(Type::Note, colours.soft, "No printed figure bears on this claim.");
     show_evidence(finding, pen);
     if (hands.view.shift_claim != state.claim) {
       hands.view.shift_claim = state.claim;
@@ -230,14 +249,16 @@ Intent show_drawers(const AppState& state, Hands& hands, const Finding& finding,
   if (finding.state != State::Undecided && finding.state != State::NotComputable) settle();
   if (finding.state != State::Conflicts && !finding.slips.empty()) explain();
 
-  if (show_head(state, hands, pen, Drawer::WordsForReport, "drawer/words", "Words for the report", "claimed · used · allows · asks", intent)) {
+  if (show_head(state, hands, pen, Drawer::WordsForReport, "drawer/words", "Words for the report",
+                "claimed · used · allows · asks", intent)) {
     pen.write(Type::Body, colours.soft, finding.paragraph);
     pen.skip(8);
     if (show_button(hands, "button/copy-words", "Copy the paragraph", pen.at())) {
       intent = CopyText{finding.paragraph, "the paragraph"};
     }
     const float next = pen.x + button_size("Copy the paragraph").x + px(8);
-    if (show_button(hands, "button/report", "Whole report in a tab", ImVec2(next, pen.y))) intent = OpenReport{};
+    if (show_button(hands, "button/report", "Whole report in a tab", ImVec2(next, pen.y)))
+      intent = OpenReport{};
     pen.y += button_size("x").y;
     close_drawer(pen);
   }
@@ -253,11 +274,15 @@ Intent show_audit_drawer(const AppState& state, Hands& hands, Pen& pen) {
     conflicts += line.match == Match::Conflicts;
     strained += line.match == Match::Strained;
   }
-  std::string aside = lines.empty() ? "nothing to set against each other" : std::to_string(lines.size()) + " looked at";
-  if (conflicts > 0) aside += ", " + std::to_string(conflicts) + (conflicts == 1 ? " conflicts" : " conflict");
+  std::string aside =
+      lines.empty() ? "nothing to set against each other" : std::to_string(lines.size()) + " looked at";
+  if (conflicts > 0)
+    aside += ", " + std::to_string(conflicts) + (conflicts == 1 ? " conflicts" : " conflict");
   if (strained > 0) aside += ", " + std::to_string(strained) + " strained";
   if (conflicts + strained == 0 && !lines.empty()) aside += ", all fit";
-  if (!show_head(state, hands, pen, Drawer::Audit, "drawer/audit", "Do the figures fit together?", aside, intent)) return intent;
+  if (!show_head(state, hands, pen, Drawer::Audit, "drawer/audit", "Do the figures fit together?", aside,
+                 intent))
+    return intent;
   // Conflicts first: they are what a reader looks for.
   for (const Match match : {Match::Conflicts, Match::Strained, Match::CannotTell, Match::Fits}) {
     for (const AuditLine& line : lines) {
@@ -270,7 +295,9 @@ Intent show_audit_drawer(const AppState& state, Hands& hands, Pen& pen) {
       pen.y = text.y + px(5);
     }
   }
-  if (lines.empty()) pen.write(Type::Note, colours.soft, "Two figures that must agree are not printed together anywhere in this table.");
+  if (lines.empty())
+    pen.write(Type::Note, colours.soft,
+              "Two figures that must agree are not printed together anywhere in this table.");
   close_drawer(pen);
   return intent;
 }

@@ -1,7 +1,7 @@
 // The text of the field being typed in, with caret and selection. Knows nothing of drawing or keys.
 //
-// This is the only state outside AppState: every change is handed on at once as an intent, so what the reader types
-// is in the review with the same keystroke.
+// This is the only state outside AppState: every change is handed on at once as an intent, so what the reader
+// types is in the review with the same keystroke.
 #pragma once
 
 #include <string>
@@ -21,7 +21,9 @@ class EditBuffer {
   size_t anchor() const { return anchor_; }
   size_t selection_begin() const { return caret_ < anchor_ ? caret_ : anchor_; }
   size_t selection_end() const { return caret_ < anchor_ ? anchor_ : caret_; }
-  std::string selected() const { return text_.substr(selection_begin(), selection_end() - selection_begin()); }
+  std::string selected() const {
+    return text_.substr(selection_begin(), selection_end() - selection_begin());
+  }
 
   // Replaces what is selected. Bytes of the text are taken as they are: UTF-8.
   void insert(std::string_view text);

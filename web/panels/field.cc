@@ -42,7 +42,9 @@ struct Block {
     const size_t end = std::clamp(byte, line.begin, line.end);
     return at.x + text_width(type, text.substr(line.begin, end - line.begin));
   }
-  float y_of(size_t byte) const { return at.y + static_cast<float>(line_of(lines, byte)) * setting(type).leading; }
+  float y_of(size_t byte) const {
+    return at.y + static_cast<float>(line_of(lines, byte)) * setting(type).leading;
+  }
   size_t byte_under(const ImVec2& point) const {
     const auto row = static_cast<int>(std::floor((point.y - at.y) / setting(type).leading));
     const Line& line = lines[static_cast<size_t>(std::clamp(row, 0, static_cast<int>(lines.size()) - 1))];
@@ -61,7 +63,8 @@ void draw_selection(const Block& block, size_t begin, size_t end) {
     float right = text_width(block.type, block.text.substr(line.begin, to - line.begin));
     if (end > line.end && i + 1 < block.lines.size()) right += px(4);  // the line end is selected too
     const float y = block.at.y + static_cast<float>(i) * leading;
-    list->AddRectFilled(ImVec2(block.at.x + left, y), ImVec2(block.at.x + right, y + leading), palette().selection);
+    list->AddRectFilled(ImVec2(block.at.x + left, y), ImVec2(block.at.x + right, y + leading),
+                        palette().selection);
   }
 }
 
@@ -74,23 +77,28 @@ void move_between_lines(Hands& hands, const Block& block) {
   if (!up && !down) return;
   if (typing.goal_x < 0) typing.goal_x = block.x_of(typing.buffer.caret()) - block.at.x;
   const float goal = typing.goal_x;
-  typing.buffer.move_to(byte_at(block.type, block.text, block.lines[up ? row - 1 : row + 1], goal), hands.shift());
+  typing.buffer.move_to(byte_at(block.type, block.text, block.lines[up ? row - 1 : row + 1], goal),
+                        hands.shift());
   typing.goal_x = goal;
 }
 
-void draw_frame_of(const ImVec2& low, const ImVec2& high, const FieldStyle& style, bool hovered, bool typing, bool ring) {
+void draw_frame_of(const ImVec2& low, const ImVec2& high, const FieldStyle& style, bool hovered, bool typing,
+                   bool ring) {
   const Palette& colours = palette();
   const float round = px(3);
   if (style.frame == Frame::Box) {
-    draw_card(low, high, colours.card, typing ? colours.ink : hovered ? colours.thin_rule : colours.control,
+    draw_card(low, high, colours.card,
+              typing    ? colours.ink
+              : hovered ? colours.thin_rule
+                        : colours.control,
               typing ? px(1.5f) : hair(), round);
     return;
   }
   ImDrawList* const list = ImGui::GetWindowDrawList();
   if (typing || hovered || ring) list->AddRectFilled(low, high, typing ? colours.card : colours.hover, round);
   if (style.frame == Frame::Line || typing) {
-    draw_rule(ImVec2(low.x, high.y - (typing ? px(1.5f) : hair())), high.x - low.x, typing ? px(1.5f) : hair(),
-              typing ? colours.ink : colours.thin_rule);
+    draw_rule(ImVec2(low.x, high.y - (typing ? px(1.5f) : hair())), high.x - low.x,
+              typing ? px(1.5f) : hair(), typing ? colours.ink : colours.thin_rule);
   }
 }
 
@@ -98,9 +106,12 @@ void draw_frame_of(const ImVec2& low, const ImVec2& high, const FieldStyle& styl
 
 ImVec2 field_room(const FieldStyle& style) {
   switch (style.frame) {
-    case Frame::Box: return {px(8), px(4)};
-    case Frame::Line: return {px(4), px(1)};
-    case Frame::Bare: break;
+    case Frame::Box:
+      return {px(8), px(4)};
+    case Frame::Line:
+      return {px(4), px(1)};
+    case Frame::Bare:
+      break;
   }
   return {px(4), px(2)};
 }
@@ -108,7 +119,8 @@ ImVec2 field_room(const FieldStyle& style) {
 float field_height(const FieldStyle& style, const std::string& text, float width) {
   const ImVec2 room = field_room(style);
   const float inner = style.many_lines ? width - 2 * room.x : 0;
-  return text_height(style.type, style.many_lines ? std::string_view(text) : std::string_view("x"), inner) + 2 * room.y;
+  return text_height(style.type, style.many_lines ? std::string_view(text) : std::string_view("x"), inner) +
+         2 * room.y;
 }
 
 bool type_with_keys(Hands& hands, bool many_lines, bool enter_breaks) {
@@ -145,13 +157,15 @@ bool type_with_keys(Hands& hands, bool many_lines, bool enter_breaks) {
   if (hands.key(ImGuiKey_Delete)) buffer.erase_forward(by_word);
   const std::string& text = buffer.text();
   if (hands.key(ImGuiKey_Home)) {
-    const size_t line = buffer.caret() == 0 || command ? std::string::npos : text.rfind('\n', buffer.caret() - 1);
+    const size_t line =
+        buffer.caret() == 0 || command ? std::string::npos : text.rfind('\n', buffer.caret() - 1);
     buffer.move_to(line == std::string::npos ? 0 : line + 1, shift);
   }
   if (hands.key(ImGuiKey_End)) {
     buffer.move_to(command ? text.size() : std::min(text.find('\n', buffer.caret()), text.size()), shift);
   }
-  if (enter_breaks && !command && (hands.key(ImGuiKey_Enter) || hands.key(ImGuiKey_KeypadEnter))) buffer.insert("\n");
+  if (enter_breaks && !command && (hands.key(ImGuiKey_Enter) || hands.key(ImGuiKey_KeypadEnter)))
+    buffer.insert("\n");
   if (!command) {
     if (const std::string typed = hands.take_typed(); !typed.empty()) buffer.insert(typed);
   }
@@ -160,8 +174,8 @@ bool type_with_keys(Hands& hands, bool many_lines, bool enter_breaks) {
   return changed;
 }
 
-std::optional<std::string> show_field(Hands& hands, const std::string& id, const std::string& value, const ImVec2& low,
-                                      const ImVec2& high, const FieldStyle& style) {
+std::optional<std::string> show_field(Hands& hands, const std::string& id, const std::string& value,
+                                      const ImVec2& low, const ImVec2& high, const FieldStyle& style) {
   const Press press = hands.press(id, "textbox", low, high);
   std::optional<std::string> answer;
   const bool was_typing = hands.types_in(id);
@@ -182,8 +196,10 @@ std::optional<std::string> show_field(Hands& hands, const std::string& id, const
   const ImVec2 room = field_room(style);
   const ImVec2 inner_low(low.x + room.x, low.y + room.y), inner_high(high.x - room.x, high.y - room.y);
   const auto lay_out = [&](std::string_view text) {
-    return Block{text, set_in_lines(style.type, text, style.many_lines ? inner_high.x - inner_low.x : 0),
-                 ImVec2(inner_low.x - (typing && !style.many_lines ? hands.typing()->scroll : 0), inner_low.y), style.type};
+    return Block{
+        text, set_in_lines(style.type, text, style.many_lines ? inner_high.x - inner_low.x : 0),
+        ImVec2(inner_low.x - (typing && !style.many_lines ? hands.typing()->scroll : 0), inner_low.y),
+        style.type};
   };
   if (typing) {
     Hands::Typing& state = *hands.typing();
@@ -192,7 +208,8 @@ std::optional<std::string> show_field(Hands& hands, const std::string& id, const
     if (hands.key(ImGuiKey_Escape, false)) {
       if (state.buffer.text() != state.at_start) answer = state.at_start;
       hands.stop_typing();
-    } else if (!style.enter_breaks && !hands.command() && (hands.key(ImGuiKey_Enter, false) || hands.key(ImGuiKey_KeypadEnter, false))) {
+    } else if (!style.enter_breaks && !hands.command() &&
+               (hands.key(ImGuiKey_Enter, false) || hands.key(ImGuiKey_KeypadEnter, false))) {
       hands.stop_typing();
     }
   } else if (press.focused && hands.key(ImGuiKey_F2, false)) {
@@ -233,7 +250,8 @@ std::optional<std::string> show_field(Hands& hands, const std::string& id, const
     // A line longer than the field moves so that the caret stays in sight.
     const float caret = block.x_of(state.buffer.caret()) - block.at.x, width = inner_high.x - inner_low.x;
     if (!style.many_lines) {
-      const float scroll = std::clamp(state.scroll, std::max(0.0f, caret - width + px(2)), std::max(0.0f, caret - px(2)));
+      const float scroll =
+          std::clamp(state.scroll, std::max(0.0f, caret - width + px(2)), std::max(0.0f, caret - px(2)));
       if (scroll != state.scroll) {
         state.scroll = scroll;
         request_frames(1);
@@ -270,15 +288,16 @@ std::optional<std::string> show_field(Hands& hands, const std::string& id, const
   if (still) {
     const size_t caret = hands.typing()->buffer.caret();
     const float x = snap(block.x_of(caret)), y = block.y_of(caret);
-    ImGui::GetWindowDrawList()->AddRectFilled(ImVec2(x - px(0.5f), y + px(2)), ImVec2(x + px(1), y + leading - px(2)),
-                                              palette().ink);
+    ImGui::GetWindowDrawList()->AddRectFilled(ImVec2(x - px(0.5f), y + px(2)),
+                                              ImVec2(x + px(1), y + leading - px(2)), palette().ink);
     // The window of an input method opens here.
     ImGuiPlatformImeData& input_method = ImGui::GetCurrentContext()->PlatformImeData;
     input_method.WantVisible = true;
     input_method.InputPos = ImVec2(x, y);
     input_method.InputLineHeight = leading;
     if (caret != caret_before) {
-      ImGui::ScrollToRect(ImGui::GetCurrentWindow(), ImRect(ImVec2(x - px(8), y - px(8)), ImVec2(x + px(8), y + leading + px(8))),
+      ImGui::ScrollToRect(ImGui::GetCurrentWindow(),
+                          ImRect(ImVec2(x - px(8), y - px(8)), ImVec2(x + px(8), y + leading + px(8))),
                           ImGuiScrollFlags_KeepVisibleEdgeX | ImGuiScrollFlags_KeepVisibleEdgeY);
     }
   }

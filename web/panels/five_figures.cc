@@ -59,10 +59,12 @@ Intent show_five_figures(const AppState&, Hands& hands, Pen& pen) {
   const float field = field_height(style, "", 0), row = setting(Type::Small).leading + px(3) + field + px(14);
   if (hands.focus().empty()) hands.give_focus("five/coef1");
   for (size_t i = 0; i < 5; ++i) {
-    const float x = pen.x + static_cast<float>(blanks[i].column) * (width + gap), y = pen.y + static_cast<float>(blanks[i].row) * row;
+    const float x = pen.x + static_cast<float>(blanks[i].column) * (width + gap),
+                y = pen.y + static_cast<float>(blanks[i].row) * row;
     draw_line(Type::Small, ImVec2(x, y), colours.quiet, blanks[i].label);
     const ImVec2 low(x, y + setting(Type::Small).leading + px(3));
-    if (const auto typed = show_field(hands, blanks[i].id, view.five[i], low, ImVec2(low.x + width, low.y + field), style)) {
+    if (const auto typed =
+            show_field(hands, blanks[i].id, view.five[i], low, ImVec2(low.x + width, low.y + field), style)) {
       view.five[i] = *typed;
     }
   }
@@ -70,8 +72,9 @@ Intent show_five_figures(const AppState&, Hands& hands, Pen& pen) {
   const float x = pen.x + width + gap, y = pen.y + 2 * row;
   draw_line(Type::Small, ImVec2(x, y), colours.quiet, "the claim");
   const std::vector<std::string> claims = {"both are zero", "they are equal"};
-  const int picked = show_chooser(hands, "five/claim", claims[view.five_equal ? 1 : 0], claims, view.five_equal ? 1 : 0,
-                                  ImVec2(x, y + setting(Type::Small).leading + px(9)));
+  const int picked =
+      show_chooser(hands, "five/claim", claims[view.five_equal ? 1 : 0], claims, view.five_equal ? 1 : 0,
+                   ImVec2(x, y + setting(Type::Small).leading + px(9)));
   if (picked >= 0) view.five_equal = picked == 1;
   pen.y += 3 * row;
   pen.rule(colours.hairline);
@@ -102,7 +105,8 @@ Intent show_five_figures(const AppState&, Hands& hands, Pen& pen) {
     hands.stop_typing();
   }
   pen.y += button_size("x").y + px(6);
-  pen.write(Type::Small, colours.quiet, "It takes the place of the review on the page; undo brings that back.");
+  pen.write(Type::Small, colours.quiet,
+            "It takes the place of the review on the page; undo brings that back.");
   return intent;
 }
 

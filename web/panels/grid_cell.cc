@@ -16,8 +16,9 @@ void draw_words(const CellBox& box, std::string_view text, ImU32 colour) {
   float y = box.low.y + px(1);
   for (const Line& line : set_in_lines(box.type, text, width)) {
     const std::string_view part = text.substr(line.begin, line.end - line.begin);
-    const float x = box.set == SetAt::Left ? box.low.x + px(4)
-                                           : box.low.x + px(4) + std::max(0.0f, (width - text_width(box.type, part)) / 2);
+    const float x = box.set == SetAt::Left
+                        ? box.low.x + px(4)
+                        : box.low.x + px(4) + std::max(0.0f, (width - text_width(box.type, part)) / 2);
     draw_line(box.type, ImVec2(x, y), colour, part);
     y += leading;
   }
@@ -28,14 +29,16 @@ void draw_figure(const CellBox& box, const std::string& value, char decimal) {
   const float y = box.low.y + (box.high.y - box.low.y - setting(box.type).leading) / 2;
   if (!figure.numeric) {
     const float width = text_width(box.type, value), right = box.high.x - px(6);
-    draw_cut(box.type, ImVec2(std::max(box.low.x + px(4), right - width), y), box.colour, value, right - box.low.x - px(4));
+    draw_cut(box.type, ImVec2(std::max(box.low.x + px(4), right - width), y), box.colour, value,
+             right - box.low.x - px(4));
     return;
   }
   const float left = text_width(box.type, figure.left), right = text_width(box.type, figure.right);
   draw_line(box.type, ImVec2(box.point_x - left, y), box.colour, figure.left);
   draw_line(box.type, ImVec2(box.point_x, y), box.colour, figure.right);
   if (box.brackets && value.find_first_of("([{") == std::string::npos) {
-    draw_line(box.type, ImVec2(box.point_x - left - text_width(box.type, "("), y), faded(box.colour, 0.75f), "(");
+    draw_line(box.type, ImVec2(box.point_x - left - text_width(box.type, "("), y), faded(box.colour, 0.75f),
+              "(");
     draw_line(box.type, ImVec2(box.point_x + right, y), faded(box.colour, 0.75f), ")");
   }
 }
@@ -65,7 +68,8 @@ Aligned split_at_point(std::string text, char decimal) {
   const bool has_point = point != std::string::npos && point + 1 < text.size() && is_digit(text[point + 1]);
   if (!has_point) {  // a whole number ends where its point would stand
     at = first;
-    while (at < text.size() && (is_digit(text[at]) || text[at] == ',' || text[at] == '.' || text[at] == '\'')) ++at;
+    while (at < text.size() && (is_digit(text[at]) || text[at] == ',' || text[at] == '.' || text[at] == '\''))
+      ++at;
   }
   split.left = text.substr(0, at);
   split.right = text.substr(at);
@@ -74,14 +78,15 @@ Aligned split_at_point(std::string text, char decimal) {
 
 std::string with_minus(std::string text) {
   const size_t at = text.find_first_not_of("([ ");
-  if (at != std::string::npos && text[at] == '-' && at + 1 < text.size() && (is_digit(text[at + 1]) || text[at + 1] == '.')) {
+  if (at != std::string::npos && text[at] == '-' && at + 1 < text.size() &&
+      (is_digit(text[at + 1]) || text[at + 1] == '.')) {
     text.replace(at, 1, "−");
   }
   return text;
 }
 
-CellAnswer show_cell(Hands& hands, const std::string& id, const std::string& value, const CellBox& box, const CellLook& look,
-                     char decimal) {
+CellAnswer show_cell(Hands& hands, const std::string& id, const std::string& value, const CellBox& box,
+                     const CellLook& look, char decimal) {
   const Palette& colours = palette();
   CellAnswer answer;
   ImDrawList* const list = ImGui::GetWindowDrawList();
@@ -89,10 +94,12 @@ CellAnswer show_cell(Hands& hands, const std::string& id, const std::string& val
   if (hands.types_in(id)) {
     FieldStyle style;
     style.type = box.type;
-    const float needed = text_width(box.type, hands.typing()->buffer.text()) + 2 * field_room(style).x + px(6);
+    const float needed =
+        text_width(box.type, hands.typing()->buffer.text()) + 2 * field_room(style).x + px(6);
     const float grow = std::max(0.0f, px(30) - (box.high.y - box.low.y)) / 2;
     // The field stands in the cell's first line, and reaches to the right for a text that needs more room.
-    const float bottom = box.set == SetAt::Point ? box.high.y + grow : box.low.y + setting(box.type).leading + px(8);
+    const float bottom =
+        box.set == SetAt::Point ? box.high.y + grow : box.low.y + setting(box.type).leading + px(8);
     const ImVec2 low(box.low.x, box.low.y - (box.set == SetAt::Point ? grow : px(2)));
     const ImVec2 high(std::max(box.high.x, box.low.x + needed), bottom);
     const bool enter = hands.sees(ImGuiKey_Enter) || hands.sees(ImGuiKey_KeypadEnter);
@@ -118,8 +125,8 @@ CellAnswer show_cell(Hands& hands, const std::string& id, const std::string& val
   if (press.hovered) list->AddRectFilled(box.low, box.high, colours.hover);
   if (press.focused) {
     const float thick = px(2);
-    list->AddRect(ImVec2(box.low.x + thick / 2, box.low.y + thick / 2), ImVec2(box.high.x - thick / 2, box.high.y - thick / 2),
-                  colours.ink, px(2), 0, thick);
+    list->AddRect(ImVec2(box.low.x + thick / 2, box.low.y + thick / 2),
+                  ImVec2(box.high.x - thick / 2, box.high.y - thick / 2), colours.ink, px(2), 0, thick);
   }
   const std::string& shown = look.shown ? *look.shown : value;
   if (shown.empty()) {
@@ -133,7 +140,8 @@ CellAnswer show_cell(Hands& hands, const std::string& id, const std::string& val
     // Marked by a query at the cell's side and an underline of dots; the reason is written beside it.
     const float y = box.high.y - px(3);
     for (float x = box.low.x + px(6); x < box.high.x - px(6); x += px(4)) {
-      list->AddRectFilled(ImVec2(snap(x), snap(y)), ImVec2(snap(x) + px(2), snap(y) + px(1.5f)), colours.conflicts);
+      list->AddRectFilled(ImVec2(snap(x), snap(y)), ImVec2(snap(x) + px(2), snap(y) + px(1.5f)),
+                          colours.conflicts);
     }
     draw_line(Type::SmallStrong, ImVec2(box.low.x + px(3), box.low.y), colours.conflicts, "?");
   }

@@ -10,7 +10,8 @@
 
 namespace rejoinder {
 
-// The text of a printed figure, split where its decimal point stands; whole numbers end there, words have no point.
+// The text of a printed figure, split where its decimal point stands; whole numbers end there, words have no
+// point.
 struct Aligned {
   std::string left, right;
   bool numeric = false;
@@ -19,8 +20,8 @@ Aligned split_at_point(std::string text, char decimal);
 // For drawing only: a hyphen that stands for a minus is drawn as one.
 std::string with_minus(std::string text);
 
-// How a cell is set: figures with their decimal points at point_x, headings centred, names of terms from the left, both in as
-// many lines as they need.
+// How a cell is set: figures with their decimal points at point_x, headings centred, names of terms from the
+// left, both in as many lines as they need.
 enum class SetAt { Point, Centre, Left };
 struct CellBox {
   ImVec2 low, high;
@@ -32,9 +33,9 @@ struct CellBox {
 };
 
 struct CellLook {
-  bool rests = false;     // the chosen finding rests on it
-  std::string trouble;    // why its text could not be read
-  const char* hint = "";  // what an empty cell shows
+  bool rests = false;                  // the chosen finding rests on it
+  std::string trouble;                 // why its text could not be read
+  const char* hint = "";               // what an empty cell shows
   const std::string* shown = nullptr;  // drawn in place of the value, while it is not being typed
 };
 
@@ -51,7 +52,7 @@ struct CellAnswer {
 };
 
 // Draws the cell and answers pointer and keys. `value` is the text as printed.
-CellAnswer show_cell(Hands& hands, const std::string& id, const std::string& value, const CellBox& box, const CellLook& look,
-                     char decimal);
+CellAnswer show_cell(Hands& hands, const std::string& id, const std::string& value, const CellBox& box,
+                     const CellLook& look, char decimal);
 
 }  // namespace rejoinder

@@ -47,16 +47,18 @@ void Hands::end() {
   }
 }
 
-Press Hands::press(std::string_view id, const char* kind, const ImVec2& low, const ImVec2& high, bool answers_keys) {
+Press Hands::press(std::string_view id, const char* kind, const ImVec2& low, const ImVec2& high,
+                   bool answers_keys) {
   stops_.push_back({std::string(id), group_, low.y});
   Press press = drag(id, kind, low, high);
   press.focused = focus_ == id;
   press.ring = press.focused && by_keyboard_;
   if (press.focused && reveal_) {
     const ImVec2 room(px(12), px(24));
-    ImGui::ScrollToRect(ImGui::GetCurrentWindow(),
-                        ImRect(ImVec2(low.x - room.x, low.y - room.y), ImVec2(high.x + room.x, high.y + room.y)),
-                        ImGuiScrollFlags_KeepVisibleEdgeX | ImGuiScrollFlags_KeepVisibleEdgeY);
+    ImGui::ScrollToRect(
+        ImGui::GetCurrentWindow(),
+        ImRect(ImVec2(low.x - room.x, low.y - room.y), ImVec2(high.x + room.x, high.y + room.y)),
+        ImGuiScrollFlags_KeepVisibleEdgeX | ImGuiScrollFlags_KeepVisibleEdgeY);
   }
   if (press.pressed) {
     if (focus_ != id && typing_ && typing_->id != id) stop_typing();
@@ -94,7 +96,8 @@ void Hands::give_focus(std::string id, bool by_keyboard) {
 }
 
 bool Hands::sees(ImGuiKey key) const {
-  return std::find(taken_.begin(), taken_.end(), static_cast<int>(key)) == taken_.end() && ImGui::IsKeyPressed(key, true);
+  return std::find(taken_.begin(), taken_.end(), static_cast<int>(key)) == taken_.end() &&
+         ImGui::IsKeyPressed(key, true);
 }
 
 bool Hands::key(ImGuiKey key, bool repeat) {
@@ -178,7 +181,8 @@ std::vector<const Hands::Stop*> Hands::reachable() const {
 void Hands::move_focus(int by) {
   const std::vector<const Stop*> stops = reachable();
   if (stops.empty()) return;
-  const auto here = std::find_if(stops.begin(), stops.end(), [this](const Stop* s) { return s->id == focus_; });
+  const auto here =
+      std::find_if(stops.begin(), stops.end(), [this](const Stop* s) { return s->id == focus_; });
   const int count = static_cast<int>(stops.size());
   const int at = here == stops.end() ? (by > 0 ? -1 : count) : static_cast<int>(here - stops.begin());
   give_focus(stops[static_cast<size_t>((at + by + count) % count)]->id);
@@ -202,8 +206,8 @@ void Hands::move_group(int by) {
 void draw_ring(const ImVec2& low, const ImVec2& high, float rounding) {
   const float gap = px(2), thick = px(2);
   ImGui::GetWindowDrawList()->AddRect(ImVec2(low.x - gap - thick / 2, low.y - gap - thick / 2),
-                                      ImVec2(high.x + gap + thick / 2, high.y + gap + thick / 2), palette().ink,
-                                      rounding + gap, 0, thick);
+                                      ImVec2(high.x + gap + thick / 2, high.y + gap + thick / 2),
+                                      palette().ink, rounding + gap, 0, thick);
 }
 
 }  // namespace rejoinder

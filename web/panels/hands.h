@@ -1,8 +1,8 @@
 // What the reader's hands are doing: where the focus stands, what is pressed, which text is being typed.
 //
-// The page keeps its own focus rather than ImGui's, so that one order of stops runs through all panes, every stop is
-// scrolled into sight, and the cells of the table can move as cells of a table do. A stop is anything that can be
-// focused; it has the name that the tests know it by: "button/save", "claim/2", "cell/0/1/coef".
+// The page keeps its own focus rather than ImGui's, so that one order of stops runs through all panes, every
+// stop is scrolled into sight, and the cells of the table can move as cells of a table do. A stop is anything
+// that can be focused; it has the name that the tests know it by: "button/save", "claim/2", "cell/0/1/coef".
 #pragma once
 
 #include <array>
@@ -24,7 +24,7 @@ struct Press {
   bool pressed = false;  // clicked, or Enter or Space while focused
   bool twice = false;    // by a double click
   bool focused = false;
-  bool ring = false;     // focused, and the focus is to be shown: the keyboard brought it here
+  bool ring = false;  // focused, and the focus is to be shown: the keyboard brought it here
 };
 
 // What a stop belongs to: F4 moves from group to group, an overlay keeps the focus inside.
@@ -41,9 +41,10 @@ class Hands {
   void enter(Group group) { group_ = group; }
   Group group() const { return group_; }
 
-  // A rectangle of the current window that can be pressed and focused. `kind` as for mark(): "button", "cell", ...
-  // `answers_keys` false: Enter and Space are left to the caller.
-  Press press(std::string_view id, const char* kind, const ImVec2& low, const ImVec2& high, bool answers_keys = true);
+  // A rectangle of the current window that can be pressed and focused. `kind` as for mark(): "button",
+  // "cell", ... `answers_keys` false: Enter and Space are left to the caller.
+  Press press(std::string_view id, const char* kind, const ImVec2& low, const ImVec2& high,
+              bool answers_keys = true);
   // The same for one the keyboard never stops at: dividers, axes.
   Press drag(std::string_view id, const char* kind, const ImVec2& low, const ImVec2& high);
 
@@ -97,17 +98,18 @@ class Hands {
 
   // ---- small things that a frame leaves for the next
   struct View {
-    int editing_claim = -1;       // the card whose particulars are open
-    bool tabbed = false;          // one pane at a time, its name on its tab
-    bool more_figures = false;    // the table's foot shows all it can hold
-    int matrix_column = -1;       // the column whose covariances are shown; -1: the chosen claim's
-    int label_column = -1;        // the column whose label is being changed
-    int claim_in_sight = -2;      // the chosen card that was last scrolled into sight
-    std::string new_term;         // the name being typed for a term to add
-    int tick_form = 0;            // 0 all zero, 1 all equal, 2 adds up to
-    double shift = -1;            // standard errors every coefficient is let move; negative: where it turns
-    int shift_claim = -1;         // of this claim
-    int ticked_claim = -1;        // the card whose list of terms is open
+    int changes = 0;            // counts what was carried out, so that panels know when to look anew
+    int editing_claim = -1;     // the card whose particulars are open
+    bool tabbed = false;        // one pane at a time, its name on its tab
+    bool more_figures = false;  // the table's foot shows all it can hold
+    int matrix_column = -1;     // the column whose covariances are shown; -1: the chosen claim's
+    int label_column = -1;      // the column whose label is being changed
+    int claim_in_sight = -2;    // the chosen card that was last scrolled into sight
+    std::string new_term;       // the name being typed for a term to add
+    int tick_form = 0;          // 0 all zero, 1 all equal, 2 adds up to
+    double shift = -1;          // standard errors every coefficient is let move; negative: where it turns
+    int shift_claim = -1;       // of this claim
+    int ticked_claim = -1;      // the card whose list of terms is open
     std::array<std::string, 5> five;  // coefficient, s.e., coefficient, s.e., n, as typed
     bool five_equal = false;          // the claim on them: equal, else both zero
   };

@@ -42,10 +42,13 @@ Intent show_matrix(const AppState& state, Hands& hands, Pen& pen) {
   if (!column) return intent;
   const std::string number = column_number(shown.column);
   if (!shown.key) {
-    pen.write(Type::Note, colours.quiet, "No covariances of the estimates in " + number + " are entered. Where the paper prints them, "
-              "they decide most: write them into the review's text.");
+    pen.write(Type::Note, colours.quiet,
+              "No covariances of the estimates in " + number +
+                  " are entered. Where the paper prints them, "
+                  "they decide most: write them into the review's text.");
     pen.skip(4);
-    if (show_button(hands, "button/matrix-text", "Open the review's text", pen.at())) intent = ShowOverlay{Overlay::ReviewText};
+    if (show_button(hands, "button/matrix-text", "Open the review's text", pen.at()))
+      intent = ShowOverlay{Overlay::ReviewText};
     pen.y += button_size("x").y + px(8);
     return intent;
   }
@@ -54,7 +57,8 @@ Intent show_matrix(const AppState& state, Hands& hands, Pen& pen) {
   const Node* const lower = rows_of(*matrix, "lower");
   if (!terms || !lower) return intent;
   const bool covariance = std::string_view(shown.key) == "covariance";
-  pen.write(Type::NoteStrong, colours.soft, (covariance ? "Covariances of the estimates in " : "Correlations of the estimates in ") + number);
+  pen.write(Type::NoteStrong, colours.soft,
+            (covariance ? "Covariances of the estimates in " : "Correlations of the estimates in ") + number);
   pen.skip(6);
   const int size = static_cast<int>(terms->items.size());
   // The widest name, and the widest figure on each side of its decimal point.
@@ -88,14 +92,16 @@ Intent show_matrix(const AppState& state, Hands& hands, Pen& pen) {
       if (finding) {
         const Cell cell{column_text(state.document, shown.column, "id"), name, shown.key};
         if (std::find(finding->rests_on.begin(), finding->rests_on.end(), cell) != finding->rests_on.end()) {
-          ImGui::GetWindowDrawList()->AddRectFilled(ImVec2(left, pen.y), ImVec2(left + wide, pen.y + line), colours.rests);
+          ImGui::GetWindowDrawList()->AddRectFilled(ImVec2(left, pen.y), ImVec2(left + wide, pen.y + line),
+                                                    colours.rests);
         }
       }
       const Aligned figure = split_at_point(text, decimal);
       const float point = left + px(11) + before;
       std::string shown_left = figure.left;
       if (!shown_left.empty() && shown_left[0] == '-') shown_left.replace(0, 1, "−");
-      draw_line(Type::Note, ImVec2(point - text_width(Type::Note, shown_left), pen.y + px(1)), colours.ink, shown_left);
+      draw_line(Type::Note, ImVec2(point - text_width(Type::Note, shown_left), pen.y + px(1)), colours.ink,
+                shown_left);
       draw_line(Type::Note, ImVec2(point, pen.y + px(1)), colours.ink, figure.right);
     }
     pen.y += line;
@@ -105,7 +111,8 @@ Intent show_matrix(const AppState& state, Hands& hands, Pen& pen) {
   pen.rule(colours.thin_rule);
   pen.skip(4);
   if (!all) pen.write(Type::Small, colours.quiet, "The columns beyond the edge are in the review's text.");
-  if (show_button(hands, "button/matrix-text", "change it in the review's text", ImVec2(pen.x - px(2), pen.y), ButtonKind::Quiet)) {
+  if (show_button(hands, "button/matrix-text", "change it in the review's text", ImVec2(pen.x - px(2), pen.y),
+                  ButtonKind::Quiet)) {
     intent = ShowOverlay{Overlay::ReviewText};
   }
   pen.y += button_size("x", ButtonKind::Quiet).y + px(8);

@@ -7,8 +7,8 @@
 
 namespace rejoinder {
 
-// Draws the matrix of the column in question below the table and moves `pen` past it; nothing where the print gives
-// none and none is asked for.
+// Draws the matrix of the column in question below the table and moves `pen` past it; nothing where the print
+// gives none and none is asked for.
 Intent show_matrix(const AppState& state, Hands& hands, Pen& pen);
 
 }  // namespace rejoinder

@@ -15,12 +15,18 @@ struct Sheet {
 
 Sheet sheet_of(Overlay overlay) {
   switch (overlay) {
-    case Overlay::PasteBox: return {"Paste a table", 1080};
-    case Overlay::FiveFigures: return {"Five figures are enough", 560};
-    case Overlay::ReviewText: return {"The review as text", 860};
-    case Overlay::Keys: return {"Keys", 660};
-    case Overlay::About: return {"About Rejoinder", 760};
-    case Overlay::None: break;
+    case Overlay::PasteBox:
+      return {"Paste a table", 1080};
+    case Overlay::FiveFigures:
+      return {"Five figures are enough", 560};
+    case Overlay::ReviewText:
+      return {"The review as text", 860};
+    case Overlay::Keys:
+      return {"Keys", 660};
+    case Overlay::About:
+      return {"About Rejoinder", 760};
+    case Overlay::None:
+      break;
   }
   return {"", 0};
 }
@@ -37,8 +43,8 @@ Intent show_overlay(const AppState& state, Hands& hands) {
   ImGui::SetNextWindowPos(ImVec2(0, 0));
   ImGui::SetNextWindowSize(window);
   ImGui::Begin("overlay", nullptr,
-               ImGuiWindowFlags_NoDecoration | ImGuiWindowFlags_NoMove | ImGuiWindowFlags_NoSavedSettings | ImGuiWindowFlags_NoNav |
-                   ImGuiWindowFlags_NoScrollWithMouse);
+               ImGuiWindowFlags_NoDecoration | ImGuiWindowFlags_NoMove | ImGuiWindowFlags_NoSavedSettings |
+                   ImGuiWindowFlags_NoNav | ImGuiWindowFlags_NoScrollWithMouse);
   hands.enter(Group::Overlay);
   ImDrawList* const list = ImGui::GetWindowDrawList();
   list->AddRectFilled(ImVec2(0, 0), window, colours.shade);
@@ -60,16 +66,28 @@ Intent show_overlay(const AppState& state, Hands& hands) {
   const ImVec2 close_at(high.x - px(18) - close_width, low.y + px(17));
 
   ImGui::SetCursorScreenPos(ImVec2(low.x + hair(), low.y + head));
-  ImGui::BeginChild(sheet.title, ImVec2(width - 2 * hair(), height - head - px(6)), 0, ImGuiWindowFlags_NoNav);
+  ImGui::BeginChild(sheet.title, ImVec2(width - 2 * hair(), height - head - px(6)), 0,
+                    ImGuiWindowFlags_NoNav);
   const ImVec2 origin = ImGui::GetCursorScreenPos();
   Pen pen{origin.x + px(24), origin.y, width - px(48) - px(6)};
   switch (state.overlay) {
-    case Overlay::PasteBox: intent = show_paste_box(state, hands, pen); break;
-    case Overlay::ReviewText: intent = show_review_text(state, hands, pen); break;
-    case Overlay::FiveFigures: intent = show_five_figures(state, hands, pen); break;
-    case Overlay::Keys: show_keys(pen); break;
-    case Overlay::About: show_about(pen); break;
-    case Overlay::None: break;
+    case Overlay::PasteBox:
+      intent = show_paste_box(state, hands, pen);
+      break;
+    case Overlay::ReviewText:
+      intent = show_review_text(state, hands, pen);
+      break;
+    case Overlay::FiveFigures:
+      intent = show_five_figures(state, hands, pen);
+      break;
+    case Overlay::Keys:
+      show_keys(pen);
+      break;
+    case Overlay::About:
+      show_about(pen);
+      break;
+    case Overlay::None:
+      break;
   }
   close_column(pen, 20);
   const float needed = pen.y + px(26) - origin.y;

@@ -5,10 +5,10 @@
 #include <vector>
 
 #include "imgui_internal.h"
+#include "web/model/document_view.h"
 #include "web/panels/field.h"
 #include "web/panels/grid_cell.h"
 #include "web/panels/matrix.h"
-#include "web/model/document_view.h"
 #include "web/panels/parts.h"
 #include "web/panels/printed_table.h"
 #include "web/platform/marks.h"
@@ -17,19 +17,21 @@
 namespace rejoinder {
 namespace {
 
-constexpr float kSide = 18;       // of the pane
+constexpr float kSide = 18;  // of the pane
 constexpr const char* kAddTerm = "add a term";
-constexpr float kColumnPad = 7;   // on each side of a column's figures
+constexpr float kColumnPad = 7;  // on each side of a column's figures
 
-// One column's measures: the widest text before and after the decimal point, of the terms and of the foot, which
-// keep points of their own; and where the column stands.
+// One column's measures: the widest text before and after the decimal point, of the terms and of the foot,
+// which keep points of their own; and where the column stands.
 struct Measure {
   struct Figures {
     float before = 0, after = 0;
   };
   Figures terms, foot;
   float left = 0, width = 0;
-  float point(const Figures& figures) const { return left + (width - figures.before - figures.after) / 2 + figures.before; }
+  float point(const Figures& figures) const {
+    return left + (width - figures.before - figures.after) / 2 + figures.before;
+  }
 };
 
 // The grid as the arrows see it: each line's stops, the name of the row first, "" where there is none.
@@ -57,8 +59,8 @@ std::string move_from(const Stops& stops, const std::string& id, const CellMove&
 struct Grid {
   const AppState& state;
   Hands& hands;
-  const PrintedTable table;
-  const std::string second;  // the key of what stands under the coefficients
+  const TableFacts& facts;
+  const PrintedTable& table;
   Intent intent = {};
   Stops stops = {};
   std::vector<Measure> measures = {};
@@ -82,14 +84,21 @@ struct Grid {
   }
 
   // A figure of column `c`, in the line that starts at `y`.
-  std::string figure(int c, const TableCell& cell, const std::string& id, float y, float height, Type type, ImU32 colour,
-                     bool brackets) {
-    const Measure& m = measures[static_cast<size_t>(c)];
-    CellBox box{ImVec2(m.left, y), ImVec2(m.left + m.width, y + height), SetAt::Point, m.point(cell.term < 0 ? m.foot : m.terms), type, colour, brackets};
+  std::string figure(const CellFacts& fact, const std::string& id, float y, float height, Type type,
+                     ImU32 colour, bool brackets) {
+    const TableCell& cell = fact.cell;
+    const Measure& m = measures[static_cast<size_t>(cell.column)];
+    CellBox box{ImVec2(m.left, y),
+                ImVec2(m.left + m.width, y + height),
+                SetAt::Point,
+                m.point(cell.term < 0 ? m.foot : m.terms),
+                type,
+                colour,
+                brackets};
     CellLook look;
-    look.rests = rests_on(state, cell);
-    look.trouble = trouble_in(state, cell);
-    take(id, show_cell(hands, id, text_in(state, cell), box, look, state.review.decimal), &cell);
+    look.rests = fact.rests;
+    look.trouble = fact.trouble;
+    take(id, show_cell(hands, id, fact.text, box, look, state.review.decimal), &cell);
     return id;
   }
 };
@@ -109,8 +118,12 @@ int place_of(const char* const (&keys)[size], std::string_view key, int otherwis
   return otherwise;
 }
 
-int errors_of(const AppState& state, int c) { return place_of(kErrorsKeys, column_text(state.document, c, "errors"), 3); }
-int estimator_of(const AppState& state, int c) { return place_of(kEstimatorKeys, column_text(state.document, c, "estimator"), 0); }
+int errors_of(const AppState& state, int c) {
+  return place_of(kErrorsKeys, column_text(state.document, c, "errors"), 3);
+}
+int estimator_of(const AppState& state, int c) {
+  return place_of(kEstimatorKeys, column_text(state.document, c, "estimator"), 0);
+}
 
 // A column's label without the number that stands above it anyway.
 std::string heading_of(const AppState& state, int c) {
@@ -156,27 +169,34 @@ float measure_columns(Grid& grid, float room) {
   for (const FootRow& foot : grid.table.foot) name(foot.label);
   word = std::max(word, text_width(Type::Body, kAddTerm));
   const float least = std::min(word + px(16), room * 0.4f);
-  grid.label_width = std::clamp(widest + px(14), least, std::max(least, room * (grid.table.columns > 2 ? 0.34f : 0.42f)));
+  grid.label_width =
+      std::clamp(widest + px(14), least, std::max(least, room * (grid.table.columns > 2 ? 0.34f : 0.42f)));
   grid.measures.assign(static_cast<size_t>(grid.table.columns), {});
   float all = 0;
   for (int c = 0; c < grid.table.columns; ++c) {
     Measure& m = grid.measures[static_cast<size_t>(c)];
-    for (const TermRow& row : grid.table.rows) {
-      const int term = row.term[static_cast<size_t>(c)];
-      if (term < 0) continue;
-      measure_figure(m.terms, grid.first(), text_in(state, {c, term, coefficient_key(state, c, term)}), decimal, false);
-      measure_figure(m.terms, grid.second_type(), text_in(state, {c, term, grid.second}), decimal, true);
+    for (int row = 0; row < static_cast<int>(grid.table.rows.size()); ++row) {
+      measure_figure(m.terms, grid.first(), grid.facts.at(grid.facts.coefficients, row, c).text, decimal,
+                     false);
+      measure_figure(m.terms, grid.second_type(), grid.facts.at(grid.facts.seconds, row, c).text, decimal,
+                     true);
     }
-    for (const FootRow& foot : grid.table.foot) {
-      measure_figure(m.foot, grid.first(), text_in(state, {c, -1, foot.key}), decimal, false);
+    for (int row = 0; row < static_cast<int>(grid.table.foot.size()); ++row) {
+      measure_figure(m.foot, grid.first(), grid.facts.at(grid.facts.foot, row, c).text, decimal, false);
     }
     float needed = std::max({m.terms.before + m.terms.after, m.foot.before + m.foot.after, px(46)});
-    needed = std::max(needed, chooser_size(kErrorsWords[static_cast<size_t>(errors_of(state, c))], Type::Small).x - px(10));
+    needed = std::max(needed, std::min(word_width(Type::Note, heading_of(state, c)) + px(2), px(110)));
+    needed = std::max(
+        needed, chooser_size(kErrorsWords[static_cast<size_t>(errors_of(state, c))], Type::Small).x - px(10));
     m.width = std::ceil(needed + 2 * px(grid.tight ? 4 : kColumnPad));
     all += m.width;
   }
-  // Names give way first: they can stand in two lines.
-  if (grid.label_width + all > room) grid.label_width = std::max(least, room - all);
+  // Names give way first: they can stand in two lines. Where the table must move sideways all the same, they
+  // get a good share of the room instead.
+  if (grid.label_width + all > room) {
+    grid.label_width = least + all > room ? std::clamp(widest + px(14), least, std::max(least, room * 0.36f))
+                                          : std::max(least, room - all);
+  }
   return grid.label_width + all;
 }
 
@@ -188,14 +208,30 @@ void measure(Grid& grid, float room) {
     grid.tight = true;
     all = measure_columns(grid, room);
   }
-  const float extra = std::clamp((room - all) / static_cast<float>(std::max(1, grid.table.columns)), 0.0f, px(36));
-  float x = grid.label_left + grid.label_width;
+  const float extra =
+      std::clamp((room - all) / static_cast<float>(std::max(1, grid.table.columns)), 0.0f, px(36));
+  for (Measure& m : grid.measures) m.width = snap(m.width + extra);
+}
+
+void place_columns(Grid& grid, float left) {
+  grid.label_left = left;
+  float x = left + grid.label_width;
   for (Measure& m : grid.measures) {
     m.left = x;
-    m.width = snap(m.width + extra);
     x += m.width;
   }
 }
+
+// What was worked out for the last change, kept while nothing that it depends on is different.
+struct Kept {
+  int changes = -1;
+  bool all_figures = false;
+  float room = 0, type_size = 0;
+  TableFacts facts;
+  std::vector<Measure> measures;
+  float label_width = 0;
+  bool tight = false;
+};
 
 float table_width(const Grid& grid) {
   return grid.measures.empty() ? grid.label_width
@@ -205,11 +241,16 @@ float table_width(const Grid& grid) {
 void clip_to_figures(const Grid& grid) { ImGui::PushClipRect(grid.clip_low, grid.clip_high, true); }
 
 // The name of a row, over the ground that hides figures scrolled below it.
-void name_cell(Grid& grid, const std::string& id, const std::string& name, float y, float height, const CellAnswer*& answer,
-               CellAnswer& store) {
+void name_cell(Grid& grid, const std::string& id, const std::string& name, float y, float height,
+               const CellAnswer*& answer, CellAnswer& store) {
   const float left = ImGui::GetWindowPos().x;
-  const CellBox box{ImVec2(left, y), ImVec2(left + grid.label_width - px(6), y + height), SetAt::Left, 0, grid.first(),
-                    palette().ink, false};
+  const CellBox box{ImVec2(left, y),
+                    ImVec2(left + grid.label_width - px(6), y + height),
+                    SetAt::Left,
+                    0,
+                    grid.first(),
+                    palette().ink,
+                    false};
   store = show_cell(grid.hands, id, name, box, {}, grid.state.review.decimal);
   answer = &store;
 }
@@ -225,9 +266,11 @@ float show_headings(Grid& grid, float y) {
   Hands& hands = grid.hands;
   const Palette& colours = palette();
   const float line = setting(Type::Note).leading;
-  const std::string outcome = grid.table.columns > 0 ? column_text(state.document, 0, "outcome") : std::string();
+  const std::string outcome =
+      grid.table.columns > 0 ? column_text(state.document, 0, "outcome") : std::string();
   bool same = true;
-  for (int c = 1; c < grid.table.columns; ++c) same = same && column_text(state.document, c, "outcome") == outcome;
+  for (int c = 1; c < grid.table.columns; ++c)
+    same = same && column_text(state.document, c, "outcome") == outcome;
   // Labels below the numbers, where there are any.
   bool labelled = false;
   float lines = 1;
@@ -272,12 +315,18 @@ float show_headings(Grid& grid, float y) {
       if (*picked == 3) grid.intent = RemoveColumn{c};
     }
     if (!labelled) continue;
-    const CellBox box{ImVec2(m.left, y + size.y), ImVec2(m.left + m.width, y + size.y + lines * line + px(2)), SetAt::Centre, 0,
-                      Type::Note, colours.ink, false};
+    const CellBox box{ImVec2(m.left, y + size.y),
+                      ImVec2(m.left + m.width, y + size.y + lines * line + px(2)),
+                      SetAt::Centre,
+                      0,
+                      Type::Note,
+                      colours.ink,
+                      false};
     CellLook look;
     const std::string heading = heading_of(state, c);
     look.shown = &heading;
-    const CellAnswer answer = show_cell(hands, id, column_text(state.document, c, "label"), box, look, state.review.decimal);
+    const CellAnswer answer =
+        show_cell(hands, id, column_text(state.document, c, "label"), box, look, state.review.decimal);
     grid.take(id, answer, nullptr);
     if (answer.text) grid.intent = EditColumn{c, "label", *answer.text};
     stops.push_back(id);
@@ -286,8 +335,10 @@ float show_headings(Grid& grid, float y) {
   y += line + px(4) + lines * line + px(4);
   // What is explained: once where all columns explain the same, else a line of its own.
   if (same && !hands.view.more_figures) {
-    const float at = y - px(4) - (labelled ? line : line + px(2));
-    if (!outcome.empty()) plain_name(grid, outcome, at, Type::Note, colours.ink);
+    const float wide = grid.label_width - px(12), high = text_height(Type::Note, outcome, wide);
+    draw_text(Type::Note,
+              ImVec2(ImGui::GetWindowPos().x + px(4), y - px(5) - std::min(high, line * (1 + lines))),
+              colours.ink, outcome, wide);
     if (labelled) grid.stops.push_back(stops);
     return y + px(2);
   }
@@ -296,7 +347,10 @@ float show_headings(Grid& grid, float y) {
   float outcome_lines = 1;
   for (int c = 0; c < grid.table.columns; ++c) {
     const float width = grid.measures[static_cast<size_t>(c)].width - px(8);
-    outcome_lines = std::max(outcome_lines, static_cast<float>(set_in_lines(Type::Note, column_text(state.document, c, "outcome"), width).size()));
+    outcome_lines =
+        std::max(outcome_lines,
+                 static_cast<float>(
+                     set_in_lines(Type::Note, column_text(state.document, c, "outcome"), width).size()));
   }
   const float height = outcome_lines * line + px(2);
   clip_to_figures(grid);
@@ -304,8 +358,15 @@ float show_headings(Grid& grid, float y) {
   for (int c = 0; c < grid.table.columns; ++c) {
     const Measure& m = grid.measures[static_cast<size_t>(c)];
     const std::string id = "column/" + std::to_string(c) + "/outcome";
-    const CellBox box{ImVec2(m.left, y), ImVec2(m.left + m.width, y + height), SetAt::Centre, 0, Type::Note, colours.quiet, false};
-    const CellAnswer answer = show_cell(hands, id, column_text(state.document, c, "outcome"), box, {}, state.review.decimal);
+    const CellBox box{ImVec2(m.left, y),
+                      ImVec2(m.left + m.width, y + height),
+                      SetAt::Centre,
+                      0,
+                      Type::Note,
+                      colours.quiet,
+                      false};
+    const CellAnswer answer =
+        show_cell(hands, id, column_text(state.document, c, "outcome"), box, {}, state.review.decimal);
     grid.take(id, answer, nullptr);
     if (answer.text) grid.intent = EditColumn{c, "outcome", *answer.text};
     outcomes.push_back(id);
@@ -316,10 +377,10 @@ float show_headings(Grid& grid, float y) {
 }
 
 float show_term(Grid& grid, int row, float y) {
-  const AppState& state = grid.state;
   const TermRow& term = grid.table.rows[static_cast<size_t>(row)];
   const Palette& colours = palette();
-  const float first = setting(grid.first()).leading + px(1), second = setting(grid.second_type()).leading + px(1);
+  const float first = setting(grid.first()).leading + px(1),
+              second = setting(grid.second_type()).leading + px(1);
   const std::string name_id = "term/" + std::to_string(row);
   const float name_height = text_height(grid.first(), term.name, grid.label_width - px(14)) + px(2);
   const float height = std::max(first + second, name_height);
@@ -331,8 +392,9 @@ float show_term(Grid& grid, int row, float y) {
   if (answer->text) {
     for (int c = 0; c < grid.table.columns; ++c) {
       if (term.term[static_cast<size_t>(c)] < 0) continue;
-      grid.intent = answer->text->empty() ? Intent(RemoveTerm{term.name})
-                                          : Intent(RenameTerm{c, term.term[static_cast<size_t>(c)], *answer->text});
+      grid.intent = answer->text->empty()
+                        ? Intent(RemoveTerm{term.name})
+                        : Intent(RenameTerm{c, term.term[static_cast<size_t>(c)], *answer->text});
       break;
     }
   }
@@ -341,17 +403,17 @@ float show_term(Grid& grid, int row, float y) {
   std::vector<std::string> upper = {name_id}, lower = {name_id};
   for (int part = 0; part < 2; ++part) {
     for (int c = 0; c < grid.table.columns; ++c) {
-      const int at = term.term[static_cast<size_t>(c)];
-      const std::string key = part == 0 ? (at < 0 ? "coef" : coefficient_key(state, c, at)) : grid.second;
-      if (at < 0) {
+      const CellFacts& fact = grid.facts.at(part == 0 ? grid.facts.coefficients : grid.facts.seconds, row, c);
+      if (!fact.listed) {
         (part == 0 ? upper : lower).push_back("");
         continue;
       }
-      const TableCell cell{c, at, key};
-      const std::string id = "cell/" + std::to_string(c) + "/" + std::to_string(at) + "/" + key;
+      const std::string id =
+          "cell/" + std::to_string(c) + "/" + std::to_string(fact.cell.term) + "/" + fact.cell.key;
       (part == 0 ? upper : lower)
-          .push_back(grid.figure(c, cell, id, part == 0 ? y : y + first, part == 0 ? first : second,
-                                 part == 0 ? grid.first() : grid.second_type(), part == 0 ? colours.ink : colours.quiet, part == 1));
+          .push_back(grid.figure(fact, id, part == 0 ? y : y + first, part == 0 ? first : second,
+                                 part == 0 ? grid.first() : grid.second_type(),
+                                 part == 0 ? colours.ink : colours.quiet, part == 1));
     }
   }
   ImGui::PopClipRect();
@@ -366,21 +428,25 @@ float show_foot(Grid& grid, float y) {
   const Palette& colours = palette();
   const float line = setting(grid.first()).leading + px(2);
   y += px(5);
-  for (const FootRow& foot : grid.table.foot) {
+  for (int row = 0; row < static_cast<int>(grid.table.foot.size()); ++row) {
+    const FootRow& foot = grid.table.foot[static_cast<size_t>(row)];
     const float height = text_height(grid.first(), foot.label, grid.label_width - px(12)) + px(2);
-    draw_text(grid.first(), ImVec2(ImGui::GetWindowPos().x + px(4), y + px(1)), colours.ink, foot.label, grid.label_width - px(12));
+    draw_text(grid.first(), ImVec2(ImGui::GetWindowPos().x + px(4), y + px(1)), colours.ink, foot.label,
+              grid.label_width - px(12));
     clip_to_figures(grid);
     std::vector<std::string> stops = {""};
     for (int c = 0; c < grid.table.columns; ++c) {
-      stops.push_back(grid.figure(c, {c, -1, foot.key}, "cell/" + std::to_string(c) + "/foot/" + foot.key, y, line,
-                                  grid.first(), colours.ink, false));
+      stops.push_back(grid.figure(grid.facts.at(grid.facts.foot, row, c),
+                                  "cell/" + std::to_string(c) + "/foot/" + foot.key, y, line, grid.first(),
+                                  colours.ink, false));
     }
     ImGui::PopClipRect();
     grid.stops.push_back(stops);
     y += height;
   }
   bool other_estimator = hands.view.more_figures;
-  for (int c = 0; c < grid.table.columns; ++c) other_estimator = other_estimator || estimator_of(state, c) != 0;
+  for (int c = 0; c < grid.table.columns; ++c)
+    other_estimator = other_estimator || estimator_of(state, c) != 0;
   for (int part = 0; part < (other_estimator ? 2 : 1); ++part) {
     plain_name(grid, part == 0 ? "errors" : "estimator", y + px(2), grid.first(), colours.ink);
     clip_to_figures(grid);
@@ -391,8 +457,9 @@ float show_foot(Grid& grid, float y) {
       const std::string& shown = words[static_cast<size_t>(chosen)];
       const float width = chooser_size(shown, Type::Small).x;
       const char* const key = part == 0 ? "errors" : "estimator";
-      const int picked = show_chooser(hands, "column/" + std::to_string(c) + "/" + key, shown, words, chosen,
-                                      ImVec2(m.left + std::max(0.0f, (m.width - width) / 2), y + px(4)), Type::Small);
+      const int picked =
+          show_chooser(hands, "column/" + std::to_string(c) + "/" + key, shown, words, chosen,
+                       ImVec2(m.left + std::max(0.0f, (m.width - width) / 2), y + px(4)), Type::Small);
       if (picked >= 0 && picked != chosen) {
         grid.intent = EditColumn{c, key, part == 0 ? kErrorsKeys[picked] : kEstimatorKeys[picked]};
       }
@@ -412,7 +479,8 @@ std::string words_on(const AppState& state, const std::optional<TableCell>& cell
   }
   const std::string text = text_in(state, *cell);
   const std::string where = column_number(cell->column) + " ";
-  if (const std::string trouble = trouble_in(state, *cell); !trouble.empty()) return where + "“" + text + "”: " + trouble;
+  if (const std::string trouble = trouble_in(state, *cell); !trouble.empty())
+    return where + "“" + text + "”: " + trouble;
   std::string words;
   if (const PrintedNumber* number = number_in(state, *cell)) {
     words = stands_for(*number) + ".";
@@ -442,33 +510,51 @@ Intent show_paper(const AppState& state, Hands& hands, const ImVec2& low, const 
   const float inner = high.x - low.x - 2 * px(kSide) - px(4);
   Pen pen{ImGui::GetCursorScreenPos().x + px(kSide), ImGui::GetCursorScreenPos().y + px(16), inner};
 
-  Grid grid{state, hands, printed_table(state, hands.view.more_figures), second_figure(state)};
+  static Kept kept;
+  const float type_size = setting(Type::Body).size;
+  const bool fresh = kept.changes != hands.view.changes || kept.all_figures != hands.view.more_figures;
+  if (fresh) kept.facts = table_facts(state, hands.view.more_figures);
+  Grid grid{state, hands, kept.facts, kept.facts.table};
+  if (fresh || kept.room != inner || kept.type_size != type_size) {
+    measure(grid, inner);
+    kept.changes = hands.view.changes;
+    kept.all_figures = hands.view.more_figures;
+    kept.room = inner;
+    kept.type_size = type_size;
+    kept.measures = grid.measures;
+    kept.label_width = grid.label_width;
+    kept.tight = grid.tight;
+  } else {
+    grid.measures = kept.measures;
+    grid.label_width = kept.label_width;
+    grid.tight = kept.tight;
+  }
   const float line = setting(Type::NoteStrong).leading;
   if (!hands.view.tabbed) draw_line(Type::NoteStrong, pen.at(), colours.soft, "From the paper");
   {
-    const std::string shown = second_figure_words(grid.second), label = "second figure: ";
+    const std::string shown = second_figure_words(grid.facts.second), label = "second figure: ";
     const ImVec2 size = chooser_size(shown);
     const float left = pen.right() - size.x;
-    if (left - text_width(Type::Note, label) > pen.x + text_width(Type::NoteStrong, "From the paper") + px(12)) {
+    if (left - text_width(Type::Note, label) >
+        pen.x + text_width(Type::NoteStrong, "From the paper") + px(12)) {
       draw_line(Type::Note, ImVec2(left - text_width(Type::Note, label), pen.y), colours.quiet, label);
     }
-    const int kind = place_of(kSecondKeys, grid.second, -1);
+    const int kind = place_of(kSecondKeys, grid.facts.second, -1);
     const int picked = show_chooser(hands, "table/second", shown, kSecondWords, kind, ImVec2(left, pen.y));
     if (picked >= 0 && picked != kind) grid.intent = SetSecondFigure{kSecondKeys[picked]};
   }
   pen.y += line + px(12);
 
   // ---- the table, in a window of its own that scrolls sideways where the columns need more room
-  measure(grid, inner);
+  place_columns(grid, pen.x);
   const bool sideways = table_width(grid) > inner + 1;
   const float known = ImGui::GetStateStorage()->GetFloat(ImGui::GetID("height"), px(400));
   ImGui::SetCursorScreenPos(pen.at());
-  ImGui::BeginChild("table", ImVec2(inner + px(1), known + (sideways ? ImGui::GetStyle().ScrollbarSize : 0)), 0,
-                    ImGuiWindowFlags_HorizontalScrollbar | ImGuiWindowFlags_NoNav);
+  ImGui::BeginChild("table", ImVec2(inner + px(1), known + (sideways ? ImGui::GetStyle().ScrollbarSize : 0)),
+                    0, ImGuiWindowFlags_HorizontalScrollbar | ImGuiWindowFlags_NoNav);
   const ImVec2 corner = ImGui::GetCursorScreenPos();
   const float fixed_left = ImGui::GetWindowPos().x;
-  grid.label_left = corner.x;
-  measure(grid, inner);
+  place_columns(grid, corner.x);
   const float wide = sideways ? inner : std::max(table_width(grid), px(120));
   grid.clip_low = ImVec2(fixed_left + grid.label_width - px(6), corner.y);
   grid.clip_high = ImVec2(fixed_left + inner + px(1), corner.y + 1e6f);
@@ -483,8 +569,10 @@ Intent show_paper(const AppState& state, Hands& hands, const ImVec2& low, const 
     FieldStyle style;
     style.frame = Frame::Bare;
     style.hint = kAddTerm;
-    const ImVec2 field_low(fixed_left, y), field_high(fixed_left + grid.label_width - px(6), y + field_height(style, "", 0));
-    const bool entered = hands.types_in("term/new") && (hands.sees(ImGuiKey_Enter) || hands.sees(ImGuiKey_KeypadEnter));
+    const ImVec2 field_low(fixed_left, y),
+        field_high(fixed_left + grid.label_width - px(6), y + field_height(style, "", 0));
+    const bool entered =
+        hands.types_in("term/new") && (hands.sees(ImGuiKey_Enter) || hands.sees(ImGuiKey_KeypadEnter));
     if (const auto text = show_field(hands, "term/new", hands.view.new_term, field_low, field_high, style)) {
       hands.view.new_term = *text;
     }
@@ -512,7 +600,8 @@ Intent show_paper(const AppState& state, Hands& hands, const ImVec2& low, const 
   if (show_button(hands, "button/more-figures", more, ImVec2(pen.x - px(2), pen.y), ButtonKind::Quiet)) {
     hands.view.more_figures = !hands.view.more_figures;
   }
-  if (show_button(hands, "button/add-column", "add a column", ImVec2(pen.x + more_width + px(8), pen.y), ButtonKind::Quiet)) {
+  if (show_button(hands, "button/add-column", "add a column", ImVec2(pen.x + more_width + px(8), pen.y),
+                  ButtonKind::Quiet)) {
     grid.intent = AddColumn{};
   }
   pen.y += button_size(more, ButtonKind::Quiet).y + px(14);
@@ -529,10 +618,12 @@ Intent show_paper(const AppState& state, Hands& hands, const ImVec2& low, const 
   const ImVec2 strip_low(low.x, high.y - strip);
   ImDrawList* const list = ImGui::GetWindowDrawList();
   list->AddRectFilled(strip_low, high, colours.paper);
-  draw_rule(ImVec2(strip_low.x + px(kSide), strip_low.y), high.x - low.x - 2 * px(kSide), hair(), colours.hairline);
+  draw_rule(ImVec2(strip_low.x + px(kSide), strip_low.y), high.x - low.x - 2 * px(kSide), hair(),
+            colours.hairline);
   const std::optional<TableCell> told = grid.pointed ? grid.pointed : state.cell;
   const std::string words = words_on(state, told);
-  draw_text(Type::Note, ImVec2(strip_low.x + px(kSide), strip_low.y + px(8)), colours.quiet, words, high.x - low.x - 2 * px(kSide));
+  draw_text(Type::Note, ImVec2(strip_low.x + px(kSide), strip_low.y + px(8)), colours.quiet, words,
+            high.x - low.x - 2 * px(kSide));
   mark("region/cell-note", "region", strip_low, high);
   return grid.intent;
 }

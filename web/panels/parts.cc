@@ -20,8 +20,8 @@ void draw_small_arrow(const ImVec2& centre, float size, ImU32 colour) {
   list->PathStroke(colour, 0, px(1.4f));
 }
 
-void open_below(Hands& hands, const std::string& id, const std::vector<std::string>& items, int chosen, const ImVec2& low,
-                const ImVec2& high) {
+void open_below(Hands& hands, const std::string& id, const std::vector<std::string>& items, int chosen,
+                const ImVec2& low, const ImVec2& high) {
   Hands::Menu menu;
   menu.owner = id;
   menu.low = low;
@@ -33,7 +33,8 @@ void open_below(Hands& hands, const std::string& id, const std::vector<std::stri
 
 void lay_veil(const Press& press, const ImVec2& low, const ImVec2& high, float round) {
   if (press.hovered || press.held) {
-    ImGui::GetWindowDrawList()->AddRectFilled(low, high, press.held ? palette().held : palette().hover, round);
+    ImGui::GetWindowDrawList()->AddRectFilled(low, high, press.held ? palette().held : palette().hover,
+                                              round);
   }
 }
 
@@ -44,8 +45,8 @@ ImVec2 button_size(std::string_view label, ButtonKind kind, Type type) {
   return {std::ceil(text_width(type, label)) + 2 * px(side), setting(type).leading + 2 * px(3)};
 }
 
-bool show_button(Hands& hands, const std::string& id, std::string_view label, const ImVec2& at, ButtonKind kind, bool able,
-                 Type type) {
+bool show_button(Hands& hands, const std::string& id, std::string_view label, const ImVec2& at,
+                 ButtonKind kind, bool able, Type type) {
   const ImVec2 size = button_size(label, kind, type);
   const ImVec2 low(snap(at.x), snap(at.y)), high(low.x + size.x, low.y + size.y);
   const Press press = able ? hands.press(id, "button", low, high) : Press{};
@@ -77,8 +78,8 @@ ImVec2 chooser_size(std::string_view shown, Type type) {
   return {std::ceil(text_width(type, shown)) + px(4 + 14 + 2), setting(type).leading + px(2)};
 }
 
-int show_chooser(Hands& hands, const std::string& id, std::string_view shown, const std::vector<std::string>& items,
-                 int chosen, const ImVec2& at, Type type) {
+int show_chooser(Hands& hands, const std::string& id, std::string_view shown,
+                 const std::vector<std::string>& items, int chosen, const ImVec2& at, Type type) {
   const ImVec2 size = chooser_size(shown, type);
   const ImVec2 low(snap(at.x), snap(at.y - px(1))), high(low.x + size.x, low.y + size.y);
   const Press press = hands.press(id, "combobox", low, high);
@@ -89,14 +90,15 @@ int show_chooser(Hands& hands, const std::string& id, std::string_view shown, co
   draw_line(type, ImVec2(low.x + px(4), low.y + px(1)), colours.ink, shown);
   draw_small_arrow(ImVec2(high.x - px(9), low.y + size.y / 2 + px(0.5f)), px(3.2f),
                    press.hovered || open ? colours.ink : colours.quiet);
-  draw_rule(ImVec2(low.x, high.y - hair()), size.x, hair(), press.hovered || open ? colours.ink : colours.control);
+  draw_rule(ImVec2(low.x, high.y - hair()), size.x, hair(),
+            press.hovered || open ? colours.ink : colours.control);
   const bool down = press.focused && !hands.typing() && !hands.menu() && hands.key(ImGuiKey_DownArrow);
   if (press.pressed || down) open_below(hands, id, items, chosen, low, high);
   return hands.picked(id).value_or(-1);
 }
 
-int show_menu_button(Hands& hands, const std::string& id, std::string_view label, const std::vector<std::string>& items,
-                     int chosen, const ImVec2& at) {
+int show_menu_button(Hands& hands, const std::string& id, std::string_view label,
+                     const std::vector<std::string>& items, int chosen, const ImVec2& at) {
   const ImVec2 size = button_size(label);
   if (show_button(hands, id, label, at)) {
     open_below(hands, id, items, chosen, at, ImVec2(at.x + size.x, at.y + size.y));
@@ -109,13 +111,15 @@ ImVec2 tick_size(std::string_view label, Type type) {
   return {box + px(8) + std::ceil(text_width(type, label)) + px(4), setting(type).leading + px(4)};
 }
 
-bool show_tick(Hands& hands, const std::string& id, std::string_view label, bool ticked, const ImVec2& at, Type type) {
+bool show_tick(Hands& hands, const std::string& id, std::string_view label, bool ticked, const ImVec2& at,
+               Type type) {
   const ImVec2 size = tick_size(label, type);
   const ImVec2 low(snap(at.x), snap(at.y)), high(low.x + size.x, low.y + size.y);
   const Press press = hands.press(id, ticked ? "checkbox on" : "checkbox off", low, high);
   const Palette& colours = palette();
   const float box = px(14);
-  const ImVec2 box_low(low.x + px(2), snap(low.y + (size.y - box) / 2)), box_high(box_low.x + box, box_low.y + box);
+  const ImVec2 box_low(low.x + px(2), snap(low.y + (size.y - box) / 2)),
+      box_high(box_low.x + box, box_low.y + box);
   draw_card(box_low, box_high, ticked ? colours.ink : colours.card,
             ticked || press.hovered ? colours.ink : colours.thin_rule, hair(), px(3));
   if (press.held) ImGui::GetWindowDrawList()->AddRectFilled(box_low, box_high, colours.held, px(3));
@@ -138,8 +142,8 @@ void draw_mark(const char* mark, ImU32 colour, const ImVec2& centre, float diame
   // The signs are drawn, not set: a letter would sit a little off the middle.
   const float half = diameter * 0.21f, stroke = diameter * 0.095f;
   const auto bar = [&](float y) {
-    list->AddRectFilled(ImVec2(centre.x - half, centre.y + y - stroke / 2), ImVec2(centre.x + half, centre.y + y + stroke / 2),
-                        colour);
+    list->AddRectFilled(ImVec2(centre.x - half, centre.y + y - stroke / 2),
+                        ImVec2(centre.x + half, centre.y + y + stroke / 2), colour);
   };
   const std::string_view sign = mark;
   if (sign == "=" || sign == "≠") {
@@ -182,14 +186,17 @@ void show_menu(Hands& hands) {
   ImGui::SetNextWindowPos(ImVec2(0, 0));
   ImGui::SetNextWindowSize(window);
   if (menu.fresh) ImGui::SetNextWindowFocus();
-  ImGui::Begin("menu", nullptr, ImGuiWindowFlags_NoDecoration | ImGuiWindowFlags_NoMove | ImGuiWindowFlags_NoSavedSettings |
-                                    ImGuiWindowFlags_NoNav | ImGuiWindowFlags_NoScrollWithMouse);
+  ImGui::Begin("menu", nullptr,
+               ImGuiWindowFlags_NoDecoration | ImGuiWindowFlags_NoMove | ImGuiWindowFlags_NoSavedSettings |
+                   ImGuiWindowFlags_NoNav | ImGuiWindowFlags_NoScrollWithMouse);
   hands.enter(Group::Menu);
   ImDrawList* const list = ImGui::GetWindowDrawList();
-  list->AddRectFilled(ImVec2(low.x, low.y + px(2)), ImVec2(high.x, high.y + px(3)), faded(colours.shade, 0.35f), px(6));
+  list->AddRectFilled(ImVec2(low.x, low.y + px(2)), ImVec2(high.x, high.y + px(3)),
+                      faded(colours.shade, 0.35f), px(6));
   draw_card(low, high, colours.card, colours.control, hair(), px(5));
   ImGui::SetCursorScreenPos(ImVec2(low.x + hair(), low.y + hair()));
-  ImGui::BeginChild("items", ImVec2(width - 2 * hair(), high.y - low.y - 2 * hair()), 0, ImGuiWindowFlags_NoNav);
+  ImGui::BeginChild("items", ImVec2(width - 2 * hair(), high.y - low.y - 2 * hair()), 0,
+                    ImGuiWindowFlags_NoNav);
   const ImVec2 origin = ImGui::GetCursorScreenPos();
   float y = origin.y + edge;
   const int count = static_cast<int>(menu.items.size());
@@ -213,16 +220,19 @@ void show_menu(Hands& hands) {
     const Press press = hands.drag("menu/" + std::to_string(i), "menuitem", item_low, item_high);
     if (press.hovered && (ImGui::GetIO().MouseDelta.x != 0 || ImGui::GetIO().MouseDelta.y != 0)) menu.at = i;
     if (menu.at == i) {
-      ImGui::GetWindowDrawList()->AddRectFilled(item_low, item_high, press.held ? colours.held : colours.hover, px(3));
+      ImGui::GetWindowDrawList()->AddRectFilled(item_low, item_high,
+                                                press.held ? colours.held : colours.hover, px(3));
       if (down || up) {
-        ImGui::ScrollToRect(ImGui::GetCurrentWindow(), ImRect(item_low, item_high), ImGuiScrollFlags_KeepVisibleEdgeY);
+        ImGui::ScrollToRect(ImGui::GetCurrentWindow(), ImRect(item_low, item_high),
+                            ImGuiScrollFlags_KeepVisibleEdgeY);
       }
     }
     if (i == menu.chosen) {
       const float mid = y + row / 2;
       ImGui::GetWindowDrawList()->AddCircleFilled(ImVec2(item_low.x + px(10), mid), px(2.6f), colours.ink);
     }
-    draw_cut(type, ImVec2(item_low.x + px(20), y + px(3)), colours.ink, item, item_high.x - item_low.x - px(24));
+    draw_cut(type, ImVec2(item_low.x + px(20), y + px(3)), colours.ink, item,
+             item_high.x - item_low.x - px(24));
     if (press.pressed) picked = i;
     y += row;
   }
@@ -234,7 +244,8 @@ void show_menu(Hands& hands) {
   menu.fresh = false;
   ImGui::End();
   if (picked < 0 && count > 0 &&
-      (hands.key(ImGuiKey_Enter, false) || hands.key(ImGuiKey_KeypadEnter, false) || hands.key(ImGuiKey_Space, false))) {
+      (hands.key(ImGuiKey_Enter, false) || hands.key(ImGuiKey_KeypadEnter, false) ||
+       hands.key(ImGuiKey_Space, false))) {
     picked = menu.at;
   }
   hands.take_typed();
@@ -262,7 +273,8 @@ void show_hint(std::string_view text, const ImVec2& low, const ImVec2& high) {
   float y = corner.y + px(6) + (how.leading - how.size) / 2;
   for (const Line& line : set_in_lines(Type::Note, text, widest)) {
     const std::string_view part = text.substr(line.begin, line.end - line.begin);
-    list->AddText(how.font, how.size, ImVec2(corner.x + px(10), snap(y)), palette().card, part.data(), part.data() + part.size());
+    list->AddText(how.font, how.size, ImVec2(corner.x + px(10), snap(y)), palette().card, part.data(),
+                  part.data() + part.size());
     y += how.leading;
   }
 }
@@ -275,7 +287,9 @@ void begin_pane(const char* id, const ImVec2& low, const ImVec2& high, ImU32 gro
 
 void end_pane() { ImGui::EndChild(); }
 
-void Pen::write(Type type, ImU32 colour, std::string_view text) { y += draw_text(type, at(), colour, text, width); }
+void Pen::write(Type type, ImU32 colour, std::string_view text) {
+  y += draw_text(type, at(), colour, text, width);
+}
 
 void Pen::rule(ImU32 colour) {
   draw_rule(at(), width, hair(), colour);

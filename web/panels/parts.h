@@ -1,4 +1,5 @@
-// The small parts that panels are made of: buttons, choosers, ticks, heads of drawers, the marks of the states.
+// The small parts that panels are made of: buttons, choosers, ticks, heads of drawers, the marks of the
+// states.
 #pragma once
 
 #include <string>
@@ -22,14 +23,15 @@ ImVec2 button_size(std::string_view label, ButtonKind kind = ButtonKind::Plain, 
 bool show_button(Hands& hands, const std::string& id, std::string_view label, const ImVec2& at,
                  ButtonKind kind = ButtonKind::Plain, bool able = true, Type type = Type::Note);
 
-// A word that opens a menu: the chosen item with a small arrow, underlined as a blank in a printed form. `items[i]` of
+// A word that opens a menu: the chosen item with a small arrow, underlined as a blank in a printed form.
+// `items[i]` of
 // "-" is a rule. Returns the item picked, else -1. `at` is the upper left, in a line of the style's leading.
 ImVec2 chooser_size(std::string_view shown, Type type = Type::Note);
-int show_chooser(Hands& hands, const std::string& id, std::string_view shown, const std::vector<std::string>& items,
-                 int chosen, const ImVec2& at, Type type = Type::Note);
+int show_chooser(Hands& hands, const std::string& id, std::string_view shown,
+                 const std::vector<std::string>& items, int chosen, const ImVec2& at, Type type = Type::Note);
 // A button that opens a menu.
-int show_menu_button(Hands& hands, const std::string& id, std::string_view label, const std::vector<std::string>& items,
-                     int chosen, const ImVec2& at);
+int show_menu_button(Hands& hands, const std::string& id, std::string_view label,
+                     const std::vector<std::string>& items, int chosen, const ImVec2& at);
 
 // A box to tick with its label. Returns whether it was pressed.
 ImVec2 tick_size(std::string_view label, Type type = Type::Note);

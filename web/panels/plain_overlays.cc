@@ -59,34 +59,47 @@ void show_keys(Pen& pen) {
               {"Ctrl Up, Ctrl Down", "moves the claim"},
               {"Delete", "takes the claim out"}});
   write_keys(pen, "In a text being typed",
-             {{"Ctrl A, C, X, V", "choose all, copy, cut, paste"}, {"Ctrl Enter", "takes the text where there is a button Take it"}});
+             {{"Ctrl A, C, X, V", "choose all, copy, cut, paste"},
+              {"Ctrl Enter", "takes the text where there is a button Take it"}});
 }
 
 void show_about(Pen& pen) {
   const Palette& colours = palette();
   pen.write(Type::Body, colours.soft,
-            "Rejoinder checks reported joint tests against the table a paper prints: which values of the statistic are consistent with "
+            "Rejoinder checks reported joint tests against the table a paper prints: which values of the "
+            "statistic are consistent with "
             "every printed digit, and whether the claim is among them.");
   pen.skip(4);
-  pen.write(Type::Note, colours.quiet, "Version " REJOINDER_VERSION ". The page makes no request: what is typed stays on this machine.");
+  pen.write(Type::Note, colours.quiet,
+            "Version " REJOINDER_VERSION ". The page makes no request: what is typed stays on this machine.");
   pen.skip(14);
   write_part(pen, "What the print cannot show",
-             {"A finding speaks of the printed figures. The data may say otherwise, and a conflict is a question to the authors.",
-              "Limits hold under the assumptions named beside them: the same sample and the same errors in both fits, a constant where "
+             {"A finding speaks of the printed figures. The data may say otherwise, and a conflict is a "
+              "question to the authors.",
+              "Limits hold under the assumptions named beside them: the same sample and the same errors in "
+              "both fits, a constant where "
               "none is denied, large-sample normal estimates where the test is a Wald test.",
-              "No R² formula is used where errors are robust or clustered. Where a figure is missing, the page says which one would settle "
+              "No R² formula is used where errors are robust or clustered. Where a figure is missing, the "
+              "page says which one would settle "
               "the claim instead of supposing a value for it.",
               "Not rejected is not equal, and jointly significant is not important."});
   write_part(pen, "Methods",
-             {"Wald test of linear restrictions on an estimate with covariance matrix V; F = W / q with q independent restrictions, or a "
+             {"Wald test of linear restrictions on an estimate with covariance matrix V; F = W / q with q "
+              "independent restrictions, or a "
               "chi-square where degrees of freedom are infinite. Any textbook of econometrics.",
-              "F from two nested least-squares fits, by their sums of squares or R². The printed facts of both fits form a system of "
-              "difference constraints, whose shortest paths give the exact range: Bellman 1958; Floyd 1962 (from memory).",
-              "Least W over all covariances that leave the printed standard errors as they are: a linear programme whose dual says by how "
-              "many standard errors every coefficient must move before the claim holds. Its value is guaranteed by weak duality: Boyd and "
+              "F from two nested least-squares fits, by their sums of squares or R². The printed facts of "
+              "both fits form a system of "
+              "difference constraints, whose shortest paths give the exact range: Bellman 1958; Floyd 1962 "
+              "(from memory).",
+              "Least W over all covariances that leave the printed standard errors as they are: a linear "
+              "programme whose dual says by how "
+              "many standard errors every coefficient must move before the claim holds. Its value is "
+              "guaranteed by weak duality: Boyd and "
               "Vandenberghe 2004, Convex Optimization (from memory).",
-              "Every printed figure stands for all values that round to it; ranges are rounded outward at each step.",
-              "The colours of the states are relatives of a palette safe for colour-vision deficiencies: Okabe and Ito (from memory)."});
+              "Every printed figure stands for all values that round to it; ranges are rounded outward at "
+              "each step.",
+              "The colours of the states are relatives of a palette safe for colour-vision deficiencies: "
+              "Okabe and Ito (from memory)."});
   pen.write(Type::Strong, colours.ink, "Licences of everything inside");
   pen.skip(3);
   pen.write(Type::Note, colours.soft, "Rejoinder itself: MIT licence.");

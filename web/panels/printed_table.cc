@@ -1,6 +1,7 @@
 #include "web/panels/printed_table.h"
 
 #include <algorithm>
+#include <set>
 
 #include "web/model/document_view.h"
 
@@ -91,11 +92,43 @@ PrintedTable printed_table(const AppState& state, bool all_figures) {
     bool shown = foot.always || all_figures;
     for (int c = 0; c < table.columns && !shown; ++c) {
       shown = !column_text(state.document, c, foot.row.key).empty() ||
-              (std::string_view(foot.row.key) == "clusters" && column_text(state.document, c, "errors") == "clustered");
+              (std::string_view(foot.row.key) == "clusters" &&
+               column_text(state.document, c, "errors") == "clustered");
     }
     if (shown) table.foot.push_back(foot.row);
   }
   return table;
+}
+
+TableFacts table_facts(const AppState& state, bool all_figures) {
+  TableFacts facts{printed_table(state, all_figures), second_figure(state), {}, {}, {}};
+  std::set<std::string> resting;  // "column term key" of the cells the chosen finding rests on
+  const auto name_of = [](const Cell& cell) { return cell.column + '\x1f' + cell.term + '\x1f' + cell.key; };
+  if (state.claim >= 0 && state.claim < static_cast<int>(state.checked.findings.size())) {
+    for (const Cell& cell : state.checked.findings[static_cast<size_t>(state.claim)].rests_on)
+      resting.insert(name_of(cell));
+  }
+  const auto fact = [&](const TableCell& cell, bool listed) {
+    CellFacts made{cell, listed, {}, {}, false};
+    if (!listed) return made;
+    made.text = text_in(state, cell);
+    made.trouble = trouble_in(state, cell);
+    made.rests = !resting.empty() && resting.contains(name_of(named_cell(state, cell)));
+    return made;
+  };
+  for (const TermRow& row : facts.table.rows) {
+    for (int c = 0; c < facts.table.columns; ++c) {
+      const int term = row.term[static_cast<size_t>(c)];
+      const bool listed = term >= 0;
+      facts.coefficients.push_back(
+          fact({c, term, listed ? coefficient_key(state, c, term) : "coef"}, listed));
+      facts.seconds.push_back(fact({c, term, facts.second}, listed));
+    }
+  }
+  for (const FootRow& row : facts.table.foot) {
+    for (int c = 0; c < facts.table.columns; ++c) facts.foot.push_back(fact({c, -1, row.key}, true));
+  }
+  return facts;
 }
 
 std::string text_in(const AppState& state, const TableCell& cell) { return cell_text(state.document, cell); }
@@ -149,9 +182,10 @@ std::string trouble_in(const AppState& state, const TableCell& cell) {
   // A number, but not one this cell can hold: the review's own message says why.
   const std::string term = cell.term < 0 ? std::string() : text_in(state, {cell.column, cell.term, "name"});
   for (const Problem& problem : state.review.problems) {
-    const bool here = problem.key.find(column->id) != std::string::npos && problem.key.find(term) != std::string::npos &&
-                      problem.key.size() >= cell.key.size() &&
-                      problem.key.compare(problem.key.size() - cell.key.size(), cell.key.size(), cell.key) == 0;
+    const bool here =
+        problem.key.find(column->id) != std::string::npos && problem.key.find(term) != std::string::npos &&
+        problem.key.size() >= cell.key.size() &&
+        problem.key.compare(problem.key.size() - cell.key.size(), cell.key.size(), cell.key) == 0;
     if (here) return problem.mend.empty() ? problem.what : problem.what + "; " + problem.mend;
   }
   return "this figure cannot stand here";
@@ -184,7 +218,8 @@ std::string stands_for(const PrintedNumber& number) {
   const auto end = [&](double x) {
     if (std::isinf(x)) return std::string(x > 0 ? "∞" : "−∞");
     char digits[64];
-    std::snprintf(digits, sizeof digits, "%.*f", std::clamp(number.decimal_places + 1, 0, 17), x == 0 ? 0.0 : x);
+    std::snprintf(digits, sizeof digits, "%.*f", std::clamp(number.decimal_places + 1, 0, 17),
+                  x == 0 ? 0.0 : x);
     return digits[0] == '-' ? "−" + std::string(digits + 1) : std::string(digits);
   };
   return number.text + " stands for " + end(number.possible.low) + " to " + end(number.possible.high);

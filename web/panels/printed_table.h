@@ -11,7 +11,8 @@
 
 namespace rejoinder {
 
-// A line with coefficients. `term[c]` is the place of the term in column c's own list, -1 where it is not listed.
+// A line with coefficients. `term[c]` is the place of the term in column c's own list, -1 where it is not
+// listed.
 struct TermRow {
   std::string name;
   std::vector<int> term;
@@ -31,6 +32,26 @@ struct PrintedTable {
 
 // `all_figures`: the foot shows every line it can hold.
 PrintedTable printed_table(const AppState& state, bool all_figures);
+
+// Everything the grid shows of the table, so that it is worked out once for each change and not for each
+// frame.
+struct CellFacts {
+  TableCell cell;
+  bool listed = true;   // false where the column does not have the term
+  std::string text;     // as printed
+  std::string trouble;  // why it could not be read
+  bool rests = false;   // the chosen finding rests on it
+};
+struct TableFacts {
+  PrintedTable table;
+  std::string second;                            // the key of what stands under the coefficients
+  std::vector<CellFacts> coefficients, seconds;  // rows by columns, row after row
+  std::vector<CellFacts> foot;                   // foot lines by columns
+  const CellFacts& at(const std::vector<CellFacts>& cells, int row, int column) const {
+    return cells[static_cast<size_t>(row) * static_cast<size_t>(table.columns) + static_cast<size_t>(column)];
+  }
+};
+TableFacts table_facts(const AppState& state, bool all_figures);
 
 // What the document holds in a cell, a ratio standing for a coefficient; empty where it holds nothing.
 std::string text_in(const AppState& state, const TableCell& cell);

@@ -11,7 +11,8 @@ namespace {
 void draw_at(const TypeSetting& how, const ImVec2& at, ImU32 colour, std::string_view text) {
   if (text.empty()) return;
   const ImVec2 place(snap(at.x), snap(at.y + (how.leading - how.size) / 2));
-  ImGui::GetWindowDrawList()->AddText(how.font, how.size, place, colour, text.data(), text.data() + text.size());
+  ImGui::GetWindowDrawList()->AddText(how.font, how.size, place, colour, text.data(),
+                                      text.data() + text.size());
 }
 
 float width_of(const TypeSetting& how, std::string_view text) {
@@ -31,11 +32,12 @@ bool holds_together(std::string_view text, size_t blank) {
   return blank >= 2 && sign(text[blank - 1]) && text[blank - 2] == ' ';
 }
 
-// Breaks text[begin, end) where it grows wider than `width`: at blanks, or inside a word that is wider than a line.
-void break_paragraph(const TypeSetting& how, bool together, std::string_view text, size_t begin, size_t end, float width,
-                     std::vector<Line>& lines) {
+// Breaks text[begin, end) where it grows wider than `width`: at blanks, or inside a word that is wider than a
+// line.
+void break_paragraph(const TypeSetting& how, bool together, std::string_view text, size_t begin, size_t end,
+                     float width, std::vector<Line>& lines) {
   const float scale = how.size / how.font->FontSize;
-  size_t from = begin;                   // of the line
+  size_t from = begin;                    // of the line
   size_t blank = std::string_view::npos;  // the last place where it may be broken
   float wide = 0;
   for (size_t at = begin; at < end;) {
@@ -121,7 +123,8 @@ void draw_rule(const ImVec2& at, float width, float thickness, ImU32 colour) {
   ImGui::GetWindowDrawList()->AddRectFilled(low, ImVec2(snap(at.x + width), low.y + thickness), colour);
 }
 
-void draw_card(const ImVec2& low, const ImVec2& high, ImU32 fill, ImU32 edge, float thickness, float rounding) {
+void draw_card(const ImVec2& low, const ImVec2& high, ImU32 fill, ImU32 edge, float thickness,
+               float rounding) {
   ImDrawList* const list = ImGui::GetWindowDrawList();
   // Two filled shapes keep the border crisp at every pixel ratio.
   const ImVec2 outer_low(snap(low.x), snap(low.y)), outer_high(snap(high.x), snap(high.y));

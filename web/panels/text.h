@@ -9,13 +9,14 @@
 
 namespace rejoinder {
 
-// A line of a text as it is set: the bytes [begin, end) of it, without the blank or line end it was broken at.
+// A line of a text as it is set: the bytes [begin, end) of it, without the blank or line end it was broken
+// at.
 struct Line {
   size_t begin, end;
 };
 
-// `text` broken into lines no wider than `width` (CSS pixels; 0: only at its own line ends). Never empty. A word
-// wider than a line is cut.
+// `text` broken into lines no wider than `width` (CSS pixels; 0: only at its own line ends). Never empty. A
+// word wider than a line is cut.
 std::vector<Line> set_in_lines(Type type, std::string_view text, float width);
 
 float text_width(Type type, std::string_view text);
@@ -32,6 +33,7 @@ float draw_text(Type type, const ImVec2& at, ImU32 colour, std::string_view text
 // A rule, `thickness` high, on the device's grid.
 void draw_rule(const ImVec2& at, float width, float thickness, ImU32 colour);
 // A filled card with a border inside its edge.
-void draw_card(const ImVec2& low, const ImVec2& high, ImU32 fill, ImU32 edge, float thickness, float rounding);
+void draw_card(const ImVec2& low, const ImVec2& high, ImU32 fill, ImU32 edge, float thickness,
+               float rounding);
 
 }  // namespace rejoinder

@@ -17,8 +17,8 @@ bool takes_by_key(Hands& hands) {
   return hands.command() && (hands.key(ImGuiKey_Enter, false) || hands.key(ImGuiKey_KeypadEnter, false));
 }
 
-std::optional<std::string> show_box(const AppState& state, Hands& hands, const char* id, const char* hint, const ImVec2& at, float width,
-                                    float least) {
+std::optional<std::string> show_box(const AppState& state, Hands& hands, const char* id, const char* hint,
+                                    const ImVec2& at, float width, float least) {
   FieldStyle style;
   style.type = Type::Mono;
   style.many_lines = true;
@@ -48,7 +48,8 @@ struct Preview {
   float x_of(int column) const { return left + label_width + static_cast<float>(column) * column_width; }
 };
 
-void draw_cell(const Preview& preview, const PastedCell& cell, int column, float y, Type type, ImU32 colour, std::string_view brackets) {
+void draw_cell(const Preview& preview, const PastedCell& cell, int column, float y, Type type, ImU32 colour,
+               std::string_view brackets) {
   if (cell.empty() || column < 0) return;
   const Palette& colours = palette();
   const float right = preview.x_of(column + 1) - px(8), line = setting(type).leading;
@@ -64,7 +65,8 @@ void draw_cell(const Preview& preview, const PastedCell& cell, int column, float
   }
   // Figures stand with their decimal points in line where the column has room for that.
   const Aligned figure = split_at_point(text, preview.table.decimal);
-  const float point = right - preview.after[static_cast<size_t>(column)], left = point - text_width(type, figure.left);
+  const float point = right - preview.after[static_cast<size_t>(column)],
+              left = point - text_width(type, figure.left);
   if (figure.numeric && left >= preview.x_of(column)) {
     draw_line(type, ImVec2(left, y), colour, figure.left);
     draw_line(type, ImVec2(point, y), colour, figure.right);
@@ -106,7 +108,8 @@ void show_table_preview(const AppState& state, Hands& hands, Pen& pen, Intent& i
   Preview preview{table, 0, 0, pen.x, std::max<size_t>(table.columns.size(), 1), {}};
   for (const PastedRow& row : table.rows) {
     preview.columns = std::max(preview.columns, row.cells.size());
-    for (const int column : row.more_column) preview.columns = std::max(preview.columns, static_cast<size_t>(std::max(column, 0)) + 1);
+    for (const int column : row.more_column)
+      preview.columns = std::max(preview.columns, static_cast<size_t>(std::max(column, 0)) + 1);
   }
   preview.after.assign(preview.columns, 0);
   for (const PastedRow& row : table.rows) {
@@ -115,16 +118,19 @@ void show_table_preview(const AppState& state, Hands& hands, Pen& pen, Intent& i
       if (figure.numeric) preview.after[c] = std::max(preview.after[c], text_width(Type::Note, figure.right));
     }
   }
-  for (const PastedRow& row : table.rows) preview.label_width = std::max(preview.label_width, text_width(Type::Note, row.label));
+  for (const PastedRow& row : table.rows)
+    preview.label_width = std::max(preview.label_width, text_width(Type::Note, row.label));
   preview.label_width = std::clamp(preview.label_width + px(10), px(60), pen.width * 0.38f);
-  preview.column_width = std::min(px(110), (pen.width - preview.label_width) / static_cast<float>(preview.columns));
+  preview.column_width =
+      std::min(px(110), (pen.width - preview.label_width) / static_cast<float>(preview.columns));
   const float wide = preview.label_width + preview.column_width * static_cast<float>(preview.columns);
   draw_rule(pen.at(), wide, px(1.5f), colours.rule);
   pen.skip(4);
   for (size_t c = 0; c < table.columns.size(); ++c) {
     const std::string& heading = table.columns[c];
     const float room = preview.column_width - px(10), width = std::min(text_width(Type::Note, heading), room);
-    draw_cut(Type::Note, ImVec2(preview.x_of(static_cast<int>(c) + 1) - px(8) - width, pen.y), colours.ink, heading, room);
+    draw_cut(Type::Note, ImVec2(preview.x_of(static_cast<int>(c) + 1) - px(8) - width, pen.y), colours.ink,
+             heading, room);
   }
   pen.y += setting(Type::Note).leading + px(3);
   draw_rule(pen.at(), wide, hair(), colours.thin_rule);
@@ -150,7 +156,9 @@ void show_table_preview(const AppState& state, Hands& hands, Pen& pen, Intent& i
   }
   draw_rule(ImVec2(pen.x, pen.y + px(2)), wide, px(1.5f), colours.rule);
   pen.skip(8);
-  if (state.reading.keeps_claims) pen.write(Type::Small, colours.quiet, "The claims entered so far stay and are checked against this table.");
+  if (state.reading.keeps_claims)
+    pen.write(Type::Small, colours.quiet,
+              "The claims entered so far stay and are checked against this table.");
 }
 
 void show_sentence_preview(const ClaimSentence& sentence, Pen& pen) {
@@ -182,25 +190,36 @@ Intent show_paste_box(const AppState& state, Hands& hands, Pen& pen) {
   Intent intent;
   const Palette& colours = palette();
   pen.write(Type::Note, colours.soft,
-            "Text from a PDF, a range of a spreadsheet, CSV, LaTeX or Markdown; or one sentence with a joint test. Nothing is replaced "
+            "Text from a PDF, a range of a spreadsheet, CSV, LaTeX or Markdown; or one sentence with a joint "
+            "test. Nothing is replaced "
             "before you take it.");
   pen.skip(10);
   const bool beside = pen.width > px(720);
   const float gap = px(24), left_width = beside ? (pen.width - gap) * 0.46f : pen.width;
   const float top = pen.y;
-  if (const auto typed = show_box(state, hands, "paste/text", "paste here", pen.at(), left_width, beside ? 300 : 150)) {
+  if (const auto typed =
+          show_box(state, hands, "paste/text", "paste here", pen.at(), left_width, beside ? 300 : 150)) {
     intent = EditBox{*typed};
   }
   const float box_bottom = top + box_height(state, left_width, beside ? 300 : 150);
-  Pen right = beside ? Pen{pen.x + left_width + gap, top, pen.width - left_width - gap} : Pen{pen.x, box_bottom + px(14), pen.width};
+  Pen right = beside ? Pen{pen.x + left_width + gap, top, pen.width - left_width - gap}
+                     : Pen{pen.x, box_bottom + px(14), pen.width};
   bool able = true;
   switch (state.reading.kind) {
-    case BoxReading::Kind::Table: show_table_preview(state, hands, right, intent); break;
-    case BoxReading::Kind::Sentence: show_sentence_preview(state.reading.sentence, right); break;
-    case BoxReading::Kind::Review: right.write(Type::Note, colours.soft, "A whole review. Taking it replaces the one on the page; undo brings that back."); break;
+    case BoxReading::Kind::Table:
+      show_table_preview(state, hands, right, intent);
+      break;
+    case BoxReading::Kind::Sentence:
+      show_sentence_preview(state.reading.sentence, right);
+      break;
+    case BoxReading::Kind::Review:
+      right.write(Type::Note, colours.soft,
+                  "A whole review. Taking it replaces the one on the page; undo brings that back.");
+      break;
     case BoxReading::Kind::Nothing:
       able = false;
-      right.write(Type::Note, colours.quiet, state.box_text.empty() ? "What is understood appears here, cell by cell." : state.box_note);
+      right.write(Type::Note, colours.quiet,
+                  state.box_text.empty() ? "What is understood appears here, cell by cell." : state.box_note);
       break;
   }
   if (able && !state.box_note.empty() && state.reading.kind != BoxReading::Kind::Table) {
@@ -221,7 +240,9 @@ Intent show_paste_box(const AppState& state, Hands& hands, Pen& pen) {
 Intent show_review_text(const AppState& state, Hands& hands, Pen& pen) {
   Intent intent;
   const Palette& colours = palette();
-  pen.write(Type::Note, colours.soft, "The whole review as the file holds it. Change it here, take it, and the page follows; undo brings the other one back.");
+  pen.write(Type::Note, colours.soft,
+            "The whole review as the file holds it. Change it here, take it, and the page follows; undo "
+            "brings the other one back.");
   pen.skip(8);
   const bool able = state.reading.kind == BoxReading::Kind::Review;
   if (show_button(hands, "text/take", "Take it", pen.at(), ButtonKind::Strong, able)) intent = AcceptBox{};
@@ -230,7 +251,8 @@ Intent show_review_text(const AppState& state, Hands& hands, Pen& pen) {
   pen.y += button_size("x").y + px(6);
   if (!state.box_note.empty()) pen.write(Type::Note, colours.undecided, state.box_note);
   pen.skip(6);
-  if (const auto typed = show_box(state, hands, "text/review", "", pen.at(), pen.width, 320)) intent = EditBox{*typed};
+  if (const auto typed = show_box(state, hands, "text/review", "", pen.at(), pen.width, 320))
+    intent = EditBox{*typed};
   pen.y += box_height(state, pen.width, 320);
   if (able && takes_by_key(hands)) intent = AcceptBox{};
   return intent;

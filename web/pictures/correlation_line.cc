@@ -25,11 +25,14 @@ std::string correlation_text(double r) {
   return r < 0 && text != ".00" ? "−" + text : text;
 }
 
-void draw_row(const char* name, const std::vector<Interval>& sets, ImU32 tone, const ImVec2& at, float width, float left) {
+void draw_row(const char* name, const std::vector<Interval>& sets, ImU32 tone, const ImVec2& at, float width,
+              float left) {
   const Palette& colours = palette();
   ImDrawList* const list = ImGui::GetWindowDrawList();
   const float axis = snap(at.y + px(9)), room = width - left;
-  const auto x_of = [&](double r) { return at.x + left + static_cast<float>((std::clamp(r, -1.0, 1.0) + 1) / 2) * room; };
+  const auto x_of = [&](double r) {
+    return at.x + left + static_cast<float>((std::clamp(r, -1.0, 1.0) + 1) / 2) * room;
+  };
   draw_line(Type::Small, ImVec2(at.x, axis - setting(Type::Small).leading / 2), colours.soft, name);
   draw_rule(ImVec2(at.x + left, axis), room, hair(), colours.edge);
   Labels labels(at.x + left - px(4), at.x + width + px(4));
@@ -51,7 +54,8 @@ void draw_row(const char* name, const std::vector<Interval>& sets, ImU32 tone, c
 }  // namespace
 
 bool has_correlation_line(const Finding& finding) {
-  return finding.correlation && finding.correlation->terms.size() == 2 && (has_figure_row(finding) || !finding.correlation->does_not_reject.empty());
+  return finding.correlation && finding.correlation->terms.size() == 2 &&
+         (has_figure_row(finding) || !finding.correlation->does_not_reject.empty());
 }
 
 float correlation_line_height(const Finding& finding) {

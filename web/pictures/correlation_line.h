@@ -1,5 +1,5 @@
-// The correlation of two estimates along a line from −1 to 1: where the reported figure can come from, and where the
-// print leaves the claim unrejected. Applies to findings with one unknown correlation.
+// The correlation of two estimates along a line from −1 to 1: where the reported figure can come from, and
+// where the print leaves the claim unrejected. Applies to findings with one unknown correlation.
 #pragma once
 
 #include "core/judge/finding.h"

@@ -43,7 +43,8 @@ Box Labels::put(Type type, std::string text, ImU32 colour, float x, float gap, c
 }
 
 void Labels::draw() const {
-  for (const Label& label : labels_) draw_line(label.type, ImVec2(label.box.left, label.box.top), label.colour, label.text);
+  for (const Label& label : labels_)
+    draw_line(label.type, ImVec2(label.box.left, label.box.top), label.colour, label.text);
 }
 
 }  // namespace rejoinder

@@ -26,8 +26,8 @@ class Labels {
 
   // Which side of `x` a label stands on.
   enum class Side { Centre, Right, Left };
-  // Puts `text` beside `x`, on the first of `sides` and the first of `rows` (tops of lines) with room; with none,
-  // where it covers least. Moved inwards where it would leave the picture. Returns its box.
+  // Puts `text` beside `x`, on the first of `sides` and the first of `rows` (tops of lines) with room; with
+  // none, where it covers least. Moved inwards where it would leave the picture. Returns its box.
   Box put(Type type, std::string text, ImU32 colour, float x, float gap, const std::vector<Side>& sides,
           const std::vector<float>& rows);
 

@@ -17,8 +17,8 @@ StatisticScale statistic_scale(const Finding& finding) {
   scale.high = limits->high;
   scale.open = std::isinf(scale.high);
 
-  // What must be seen whole: the critical value, what is reported, the low end. A high end not far beyond them is
-  // shown too; else the picture ends earlier and the bar is cut.
+  // What must be seen whole: the critical value, what is reported, the low end. A high end not far beyond
+  // them is shown too; else the picture ends earlier and the bar is cut.
   double seen = scale.low;
   if (finding.critical) seen = std::max(seen, *finding.critical);
   if (finding.reported && std::isfinite(*finding.reported)) seen = std::max(seen, *finding.reported);
@@ -32,7 +32,9 @@ StatisticScale statistic_scale(const Finding& finding) {
   return scale;
 }
 
-const char* statistic_letter(const Finding& finding) { return finding.statistic == Statistic::ChiSquare ? "χ²" : "F"; }
+const char* statistic_letter(const Finding& finding) {
+  return finding.statistic == Statistic::ChiSquare ? "χ²" : "F";
+}
 
 std::string low_text(const StatisticScale& scale) {
   return scale.low == 0 ? "0" : number_text(scale.low, ShowRounding::Down);
@@ -41,7 +43,8 @@ std::string low_text(const StatisticScale& scale) {
 std::string high_text(const StatisticScale& scale) { return number_text(scale.high, ShowRounding::Up); }
 
 std::string critical_text(const Finding& finding) {
-  return finding.critical ? level_text(finding.level) + " point " + number_text(*finding.critical) : std::string();
+  return finding.critical ? level_text(finding.level) + " point " + number_text(*finding.critical)
+                          : std::string();
 }
 
 std::string reported_text(const Finding& finding, const std::string& as_printed) {

@@ -12,9 +12,9 @@ namespace rejoinder {
 struct StatisticScale {
   bool drawable = false;  // false where the finding has no limits
   double low = 0, high = 0;
-  double end = 1;         // the value at the right end of the picture
-  bool open = false;      // no upper limit
-  bool cut = false;       // a finite upper limit beyond the picture
+  double end = 1;     // the value at the right end of the picture
+  bool open = false;  // no upper limit
+  bool cut = false;   // a finite upper limit beyond the picture
   bool chi_square = false;
 
   // Of the picture's width, 0 to 1.

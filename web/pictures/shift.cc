@@ -20,7 +20,9 @@ std::string words_at(const Shift& shift, double t) {
   const bool possible = t >= shift.turns_at * (1 - 1e-9);
   const std::string all = shift.rows.size() == 2 ? "both" : "all of them";
   const std::string claim = shift.equal ? all + " can be equal" : all + " can be zero";
-  return "Let every coefficient move by " + number_text(t) + " standard errors: " + (possible ? claim + "." : "not yet; " + claim + " from " + number_text(shift.turns_at, ShowRounding::Up) + " on.");
+  return "Let every coefficient move by " + number_text(t) + " standard errors: " +
+         (possible ? claim + "."
+                   : "not yet; " + claim + " from " + number_text(shift.turns_at, ShowRounding::Up) + " on.");
 }
 
 double greatest_t(const Shift& shift) { return std::max(3.0, 1.4 * shift.turns_at); }
@@ -53,7 +55,8 @@ Shift shift_of(const AppState& state, int claim) {
 
 float shift_height(const Shift& shift, float width) {
   const float words = text_height(Type::Small, words_at(shift, shift.turns_at), width);
-  return words + px(8) + px(kRow) * static_cast<float>(shift.rows.size()) + px(34) + setting(Type::Small).leading;
+  return words + px(8) + px(kRow) * static_cast<float>(shift.rows.size()) + px(34) +
+         setting(Type::Small).leading;
 }
 
 void show_shift(const Shift& shift, Hands& hands, const ImVec2& at, float width) {
@@ -79,7 +82,9 @@ void show_shift(const Shift& shift, Hands& hands, const ImVec2& at, float width)
   }
   if (high <= low) high = low + 1;
   const float left = at.x + names, room = width - names;
-  const auto x_of = [&](double value) { return left + static_cast<float>((value - low) / (high - low)) * room; };
+  const auto x_of = [&](double value) {
+    return left + static_cast<float>((value - low) / (high - low)) * room;
+  };
   const float top = y, bottom = y + px(kRow) * static_cast<float>(shift.rows.size());
   const bool possible = t >= shift.turns_at * (1 - 1e-9);
   double common_low = -kInfinity, common_high = kInfinity;
@@ -98,9 +103,11 @@ void show_shift(const Shift& shift, Hands& hands, const ImVec2& at, float width)
   for (const Shift::Row& row : shift.rows) {
     const float middle = snap(y + px(kRow) / 2), reach_low = x_of(row.value - t * row.standard_error),
                 reach_high = x_of(row.value + t * row.standard_error);
-    draw_cut(Type::Small, ImVec2(at.x, middle - setting(Type::Small).leading / 2), colours.soft, row.term, names - px(10));
+    draw_cut(Type::Small, ImVec2(at.x, middle - setting(Type::Small).leading / 2), colours.soft, row.term,
+             names - px(10));
     draw_rule(ImVec2(left, middle), room, hair(), colours.edge);
-    list->AddRectFilled(ImVec2(reach_low, middle - px(4)), ImVec2(reach_high, middle + px(4) + hair()), faded(colours.agrees, 0.3f));
+    list->AddRectFilled(ImVec2(reach_low, middle - px(4)), ImVec2(reach_high, middle + px(4) + hair()),
+                        faded(colours.agrees, 0.3f));
     for (const float end : {reach_low, reach_high}) {
       draw_rule(ImVec2(end - px(0.8f), middle - px(5)), px(1.6f), px(10) + hair(), colours.agrees);
     }
@@ -112,8 +119,10 @@ void show_shift(const Shift& shift, Hands& hands, const ImVec2& at, float width)
   y += px(14);
   const float track = snap(y);
   const auto t_x = [&](double value) { return left + static_cast<float>(value / most) * room; };
-  const Press press = hands.press("shift/handle", "slider", ImVec2(left - px(8), track - px(10)), ImVec2(left + room + px(8), track + px(10)), false);
-  if (press.held && room > 0) t = std::clamp(static_cast<double>((ImGui::GetMousePos().x - left) / room), 0.0, 1.0) * most;
+  const Press press = hands.press("shift/handle", "slider", ImVec2(left - px(8), track - px(10)),
+                                  ImVec2(left + room + px(8), track + px(10)), false);
+  if (press.held && room > 0)
+    t = std::clamp(static_cast<double>((ImGui::GetMousePos().x - left) / room), 0.0, 1.0) * most;
   if (press.focused && !hands.typing() && !hands.menu()) {
     if (hands.key(ImGuiKey_RightArrow)) t = std::min(most, t + most / 60);
     if (hands.key(ImGuiKey_LeftArrow)) t = std::max(0.0, t - most / 60);
@@ -127,10 +136,12 @@ void show_shift(const Shift& shift, Hands& hands, const ImVec2& at, float width)
   const ImVec2 knob(t_x(t), track + hair() / 2);
   list->AddCircleFilled(knob, px(7), press.held ? colours.ink : colours.card, 24);
   list->AddCircle(knob, px(7), colours.ink, 24, px(press.hovered || press.ring ? 2.2f : 1.6f));
-  if (press.ring) draw_ring(ImVec2(knob.x - px(7), knob.y - px(7)), ImVec2(knob.x + px(7), knob.y + px(7)), px(7));
+  if (press.ring)
+    draw_ring(ImVec2(knob.x - px(7), knob.y - px(7)), ImVec2(knob.x + px(7), knob.y + px(7)), px(7));
   Labels labels(at.x, left + room + px(4));
   const float below = track + px(10);
-  labels.put(Type::Small, "possible from t = " + number_text(shift.turns_at), colours.soft, turn, 0, {Labels::Side::Centre}, {below});
+  labels.put(Type::Small, "possible from t = " + number_text(shift.turns_at), colours.soft, turn, 0,
+             {Labels::Side::Centre}, {below});
   labels.put(Type::Small, "0", colours.quiet, left, 0, {Labels::Side::Centre}, {below});
   labels.draw();
   mark("picture/shift", "img", at, ImVec2(at.x + width, bottom));

@@ -10,9 +10,9 @@
 namespace rejoinder {
 namespace {
 
-constexpr float kBar = 12;     // height of the bar, design pixels
-constexpr float kStem = 15;    // from the axis up to the head of the pin
-constexpr float kBelow = 9;    // from the axis down to the labels below
+constexpr float kBar = 12;   // height of the bar, design pixels
+constexpr float kStem = 15;  // from the axis up to the head of the pin
+constexpr float kBelow = 9;  // from the axis down to the labels below
 
 struct Plan {
   StatisticScale scale;
@@ -55,17 +55,19 @@ Plan plan_span(const Finding& finding, const std::string& as_printed, const ImVe
     }
     if (pin_x >= 0) {
       const bool pin_is_right = pin_x > critical_x;
-      const std::vector<Side> sides =
-          pin_is_right ? std::vector<Side>{Side::Right, Side::Left} : std::vector<Side>{Side::Left, Side::Right};
+      const std::vector<Side> sides = pin_is_right ? std::vector<Side>{Side::Right, Side::Left}
+                                                   : std::vector<Side>{Side::Left, Side::Right};
       boxes.push_back(labels.put(Type::Small, reported, colours.ink, pin_x, px(8), sides, {at.y}));
     }
     plan.labels = labels;
     plan.head_y = at.y + line / 2;
     plan.critical_x = critical_x;
     plan.critical_top = lower + px(1);
-    const bool clash = boxes.size() == 2 && (boxes[0].meets(boxes[1]) ||
-                                             (boxes[1].left < critical_x + px(2) && boxes[1].right > critical_x - px(2) && rows == 1) ||
-                                             (boxes[0].left < pin_x + px(4) && boxes[0].right > pin_x - px(4)));
+    const bool clash =
+        boxes.size() == 2 &&
+        (boxes[0].meets(boxes[1]) ||
+         (boxes[1].left < critical_x + px(2) && boxes[1].right > critical_x - px(2) && rows == 1) ||
+         (boxes[0].left < pin_x + px(4) && boxes[0].right > pin_x - px(4)));
     if (!clash) break;
   }
   plan.axis_y = snap(plan.axis_y);
@@ -76,13 +78,14 @@ Plan plan_span(const Finding& finding, const std::string& as_printed, const ImVe
   const std::string low = low_text(scale), high = high_text(scale);
   Labels& labels = plan.labels;
   if (scale.open) {
-    labels.put(Type::Small, "at least " + low, colours.soft, low_x, -px(2), {Side::Right, Side::Left}, {below});
+    labels.put(Type::Small, "at least " + low, colours.soft, low_x, -px(2), {Side::Right, Side::Left},
+               {below});
   } else if (scale.cut) {
     labels.put(Type::Small, "to " + high, colours.soft, right, 0, {Side::Left}, {below});
     labels.put(Type::Small, low, colours.soft, low_x, 0, {Side::Centre, Side::Left}, {below});
   } else if (high_x - low_x < text_width(Type::Small, low + high) + px(24)) {
-    labels.put(Type::Small, low == high ? low : low + " to " + high, colours.soft, (low_x + high_x) / 2, 0, {Side::Centre},
-               {below});
+    labels.put(Type::Small, low == high ? low : low + " to " + high, colours.soft, (low_x + high_x) / 2, 0,
+               {Side::Centre}, {below});
   } else {
     labels.put(Type::Small, low, colours.soft, low_x, 0, {Side::Centre}, {below});
     labels.put(Type::Small, high, colours.soft, high_x, 0, {Side::Centre}, {below});
@@ -99,11 +102,13 @@ float span_height(const Finding& finding, const std::string& as_printed, float w
 
 void draw_pin(float low_x, float high_x, float head_y, float foot_y, ImU32 colour) {
   ImDrawList* const list = ImGui::GetWindowDrawList();
-  const float middle = (low_x + high_x) / 2, half = std::max((high_x - low_x) / 2, px(2.5f)), thick = px(1.6f);
+  const float middle = (low_x + high_x) / 2, half = std::max((high_x - low_x) / 2, px(2.5f)),
+              thick = px(1.6f);
   const float x = snap(middle - thick / 2);
   list->AddRectFilled(ImVec2(x, head_y), ImVec2(x + thick, foot_y), colour);
   list->AddCircleFilled(ImVec2(x + thick / 2, head_y), px(3.6f), colour, 20);
-  list->AddRectFilled(ImVec2(snap(middle - half), foot_y - px(2.5f)), ImVec2(snap(middle + half), foot_y), colour);
+  list->AddRectFilled(ImVec2(snap(middle - half), foot_y - px(2.5f)), ImVec2(snap(middle + half), foot_y),
+                      colour);
 }
 
 void draw_critical(float x, float top, float bottom, ImU32 colour) {
@@ -117,7 +122,9 @@ void draw_critical(float x, float top, float bottom, ImU32 colour) {
 void draw_cut_marks(float x, float middle_y, float height, ImU32 colour, ImU32 ground) {
   ImDrawList* const list = ImGui::GetWindowDrawList();
   const float half = height / 2 + px(3), lean = px(2.5f), apart = px(5);
-  const ImVec2 gap[] = {{x - lean, middle_y + half}, {x + lean, middle_y - half}, {x + lean + apart, middle_y - half},
+  const ImVec2 gap[] = {{x - lean, middle_y + half},
+                        {x + lean, middle_y - half},
+                        {x + lean + apart, middle_y - half},
                         {x - lean + apart, middle_y + half}};
   list->AddConvexPolyFilled(gap, 4, ground);
   list->AddLine(gap[0], gap[1], colour, px(1.8f));
@@ -144,7 +151,8 @@ void draw_span(const Finding& finding, const std::string& as_printed, const ImVe
   const auto x_of = [&](double value) { return at.x + static_cast<float>(scale.share(value)) * width; };
 
   draw_rule(ImVec2(at.x, plan.axis_y), width, hair(), colours.edge);
-  draw_rule(ImVec2(at.x, plan.axis_y - px(3)), hair(), px(6) + hair(), colours.thin_rule);  // where the line begins, at 0
+  draw_rule(ImVec2(at.x, plan.axis_y - px(3)), hair(), px(6) + hair(),
+            colours.thin_rule);  // where the line begins, at 0
 
   const bool beyond = scale.open || scale.cut;
   float low_x = x_of(scale.low), high_x = beyond ? right - (scale.open ? px(1) : 0) : x_of(scale.high);
@@ -154,16 +162,19 @@ void draw_span(const Finding& finding, const std::string& as_printed, const ImVe
     low_x = middle - least / 2;
     high_x = middle + least / 2;
   }
-  const ImVec2 bar_low(low_x, plan.axis_y - bar / 2), bar_high(scale.open ? high_x - bar / 2 : high_x, plan.axis_y + bar / 2);
+  const ImVec2 bar_low(low_x, plan.axis_y - bar / 2),
+      bar_high(scale.open ? high_x - bar / 2 : high_x, plan.axis_y + bar / 2);
   list->AddRectFilled(bar_low, bar_high, faded(tone, 0.28f));
   const float end = px(2.2f), over = px(3);
-  list->AddRectFilled(ImVec2(snap(low_x - end / 2), bar_low.y - over), ImVec2(snap(low_x - end / 2) + end, bar_high.y + over), tone);
+  list->AddRectFilled(ImVec2(snap(low_x - end / 2), bar_low.y - over),
+                      ImVec2(snap(low_x - end / 2) + end, bar_high.y + over), tone);
   if (scale.open) {
     draw_open_end(high_x, plan.axis_y, bar + 2 * over, tone);
   } else if (scale.cut) {
     draw_cut_marks(right - px(22), plan.axis_y, bar, tone, colours.card);
   } else {
-    list->AddRectFilled(ImVec2(snap(high_x - end / 2), bar_low.y - over), ImVec2(snap(high_x - end / 2) + end, bar_high.y + over), tone);
+    list->AddRectFilled(ImVec2(snap(high_x - end / 2), bar_low.y - over),
+                        ImVec2(snap(high_x - end / 2) + end, bar_high.y + over), tone);
   }
   if (plan.critical_x >= 0) draw_critical(plan.critical_x, plan.critical_top, bar_high.y + over, colours.ink);
   if (finding.reported) {

@@ -1,9 +1,9 @@
 // The span: the picture of a finding in one bar.
 //
 // From the lowest to the highest statistic that the print admits, the critical value as a rule across it, the
-// reported figure as a pin from above whose foot is as wide as its rounding. An infinite end is open, an arrow; a finite
-// end beyond the picture is cut by two short strokes and its value written. State colours never speak alone: the
-// words of the state stand beside the picture.
+// reported figure as a pin from above whose foot is as wide as its rounding. An infinite end is open, an
+// arrow; a finite end beyond the picture is cut by two short strokes and its value written. State colours
+// never speak alone: the words of the state stand beside the picture.
 #pragma once
 
 #include <string>
