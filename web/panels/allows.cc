@@ -194,6 +194,7 @@ Intent show_allows(const AppState& state, Hands& hands, const ImVec2& low, const
   pen.rule(colours.hairline);
   pen.skip(14);
   show_problems(state, pen);
+  scroll_by_pages(hands, Group::Allows);
   close_column(pen, 24);
   end_pane();
   return intent;

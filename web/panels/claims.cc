@@ -315,6 +315,7 @@ Intent show_claims(const AppState& state, Hands& hands, const ImVec2& low, const
     pen.skip(8);
     pen.write(Type::Note, colours.quiet, "No claim is in this state now.");
   }
+  scroll_by_pages(hands, Group::Claims);
   close_column(pen, 20);
   end_pane();
   return intent;

@@ -95,6 +95,11 @@ void Hands::give_focus(std::string id, bool by_keyboard) {
   request_frames(2);
 }
 
+bool Hands::focused_in(Group group) const {
+  return std::any_of(last_.begin(), last_.end(),
+                     [&](const Stop& stop) { return stop.group == group && stop.id == focus_; });
+}
+
 bool Hands::sees(ImGuiKey key) const {
   return std::find(taken_.begin(), taken_.end(), static_cast<int>(key)) == taken_.end() &&
          ImGui::IsKeyPressed(key, true);

@@ -50,6 +50,8 @@ class Hands {
 
   const std::string& focus() const { return focus_; }
   bool on(std::string_view id) const { return focus_ == id; }
+  // Whether the focus stood in that group when the frame began.
+  bool focused_in(Group group) const;
   // From the next frame on.
   void give_focus(std::string id, bool by_keyboard = true);
   // True in the first frame in which `id` has the focus.

@@ -89,6 +89,7 @@ Intent show_overlay(const AppState& state, Hands& hands) {
     case Overlay::None:
       break;
   }
+  scroll_by_pages(hands, Group::Overlay);
   close_column(pen, 20);
   const float needed = pen.y + px(26) - origin.y;
   if (std::abs(needed - content) > 0.5f) store->SetFloat(height_id, needed);

@@ -479,8 +479,7 @@ std::string words_on(const AppState& state, const std::optional<TableCell>& cell
   }
   const std::string text = text_in(state, *cell);
   const std::string where = column_number(cell->column) + " ";
-  if (const std::string trouble = trouble_in(state, *cell); !trouble.empty())
-    return where + "“" + text + "”: " + trouble;
+  if (const std::string trouble = trouble_in(state, *cell); !trouble.empty()) return where + trouble + ".";
   std::string words;
   if (const PrintedNumber* number = number_in(state, *cell)) {
     words = stands_for(*number) + ".";
@@ -611,6 +610,7 @@ Intent show_paper(const AppState& state, Hands& hands, const ImVec2& low, const 
   }
 
   if (Intent matrix = show_matrix(state, hands, pen); matrix.index() != 0) grid.intent = std::move(matrix);
+  scroll_by_pages(hands, Group::Paper);
   close_column(pen, 24);
   end_pane();
 

@@ -287,6 +287,15 @@ void begin_pane(const char* id, const ImVec2& low, const ImVec2& high, ImU32 gro
 
 void end_pane() { ImGui::EndChild(); }
 
+void scroll_by_pages(Hands& hands, Group group) {
+  if (hands.typing() || hands.menu() || !hands.focused_in(group)) return;
+  const float page = ImGui::GetWindowHeight() * 0.85f;
+  const float by = hands.key(ImGuiKey_PageDown) ? page : hands.key(ImGuiKey_PageUp) ? -page : 0;
+  if (by == 0) return;
+  ImGui::SetScrollY(std::clamp(ImGui::GetScrollY() + by, 0.0f, ImGui::GetScrollMaxY()));
+  request_frames(2);
+}
+
 void Pen::write(Type type, ImU32 colour, std::string_view text) {
   y += draw_text(type, at(), colour, text, width);
 }

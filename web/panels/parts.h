@@ -50,6 +50,8 @@ void show_hint(std::string_view text, const ImVec2& low, const ImVec2& high);
 // A pane: a scrolling window with its own ground. Everything drawn between begin and end is clipped to it.
 void begin_pane(const char* id, const ImVec2& low, const ImVec2& high, ImU32 ground);
 void end_pane();
+// Page Up and Page Down move the pane of `group` while the focus is in it.
+void scroll_by_pages(Hands& hands, Group group);
 
 // A pen that goes down a column of the page.
 struct Pen {

@@ -42,6 +42,7 @@ void show_keys(Pen& pen) {
              {{"Tab, Shift Tab", "to the next thing, to the one before"},
               {"F4, Shift F4", "to the next pane, to the one before"},
               {"Enter or Space", "presses what has the frame around it"},
+              {"Page Up, Page Down", "through the pane"},
               {"Ctrl Z, Ctrl Y", "undo, redo"},
               {"Ctrl S, Ctrl O", "save the review as a file, open one"},
               {"Ctrl V", "a table, a sentence or a whole review, wherever you are"},
