@@ -38,7 +38,10 @@ void show_answer(const Finding& finding, Pen& pen) {
   const ImVec2 at = pen.at();
   Pen words{pen.x + size + gap, pen.y + px(1), pen.width - size - gap};
   draw_mark(mark_for(finding.state), accent(finding.state), ImVec2(at.x + size / 2, at.y + size / 2), size);
-  words.write(Type::Strong, accent(finding.state), words_for(finding.state));
+  // The headline of a claim without a test says the state already.
+  if (finding.headline != words_for(finding.state)) {
+    words.write(Type::Strong, accent(finding.state), words_for(finding.state));
+  }
   if (!finding.sentence.empty()) words.write(Type::Body, colours.soft, finding.sentence);
   pen.y = std::max(at.y + size, words.y);
 }
@@ -101,17 +104,21 @@ void show_cautions(const Finding& finding, Pen& pen) {
 // What could not be read, outside the cells and claims that show it themselves.
 void show_problems(const AppState& state, Pen& pen) {
   const Palette& colours = palette();
-  if (state.review.problems.empty()) return;
+  // Those of the chosen claim stand with its finding already.
+  const std::string chosen = claim_text(state.document, state.claim, "id");
+  std::vector<Problem> problems;
+  for (const Problem& problem : state.review.problems) {
+    if (problem.claim.empty() || problem.claim != chosen) problems.push_back(problem);
+  }
+  if (problems.empty()) return;
   pen.write(Type::NoteStrong, colours.soft,
-            state.review.problems.size() == 1
-                ? "One thing could not be read"
-                : std::to_string(state.review.problems.size()) + " things could not be read");
+            problems.size() == 1 ? "One thing could not be read"
+                                 : std::to_string(problems.size()) + " things could not be read");
   pen.skip(4);
   int shown = 0;
-  for (const Problem& problem : state.review.problems) {
+  for (const Problem& problem : problems) {
     if (++shown > 12) {
-      pen.write(Type::Small, colours.quiet,
-                "and " + std::to_string(state.review.problems.size() - 12) + " more.");
+      pen.write(Type::Small, colours.quiet, "and " + std::to_string(problems.size() - 12) + " more.");
       break;
     }
     pen.write(Type::Note, colours.soft, problem.key);

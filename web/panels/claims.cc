@@ -246,7 +246,8 @@ Intent show_card(const AppState& state, Hands& hands, int claim, Pen& pen) {
     const std::string parts =
         parts_line(*finding, claim_text(state.document, claim, "p"), state.review.level);
     if (!parts.empty()) words.write(Type::Small, colours.quiet, parts);
-    if (finding->state == State::NotComputable && !finding->sentence.empty()) {
+    const bool told = chosen && hands.view.editing_claim == claim;  // by the form, where the text is
+    if (finding->state == State::NotComputable && !finding->sentence.empty() && !told) {
       words.write(Type::Small, colours.quiet, finding->sentence);
     }
     inner.y = std::max(inner.y + size, words.y);
