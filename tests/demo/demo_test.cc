@@ -30,8 +30,9 @@ double limit(const testing::Json& json) {
 }
 
 void expect_limit(double actual, double expected) {
-  if (std::isinf(expected))
+  if (std::isinf(expected)) {
     EXPECT_TRUE(std::isinf(actual)) << actual;
+  }
   else
     EXPECT_NEAR(actual, expected, 1e-3 * std::fabs(expected) + 1e-4);
 }

@@ -93,7 +93,9 @@ TEST(HiddenCovariances, FollowFromMeans) {
       expect_inside(alone, truth, text);
       expect_inside(with_means, truth, text + means);
       EXPECT_GT(with_means.wald->low, alone.wald->low * (1 - 1e-9));
-      if (k == 1) EXPECT_TRUE(std::isfinite(with_means.wald->high)) << text + means;
+      if (k == 1) {
+        EXPECT_TRUE(std::isfinite(with_means.wald->high)) << text + means;
+      }
     }
 }
 

@@ -79,7 +79,9 @@ TEST(PublishedTests, FollowFromRSquared) {
     expect_printed(c, "F", *finding.f);
     // The printed p may come from the unrounded F: it lies within the limits all the same.
     const Result<PrintedNumber> p = read_printed_number(c.expected.has("p") ? c.expected.at("p").text : "0.5");
-    if (c.expected.has("p")) EXPECT_TRUE(p.value().possible.overlaps(*finding.p));
+    if (c.expected.has("p")) {
+      EXPECT_TRUE(p.value().possible.overlaps(*finding.p));
+    }
   }
 }
 

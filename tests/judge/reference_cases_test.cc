@@ -100,17 +100,24 @@ void compare(const Json& want, const Json& report) {
   ASSERT_EQ(report.at("findings").items.size(), 1u);
   const Shown shown(report.at("findings").items[0]);
   for (const char* key : {"state", "decision", "figure", "df_claimed", "statistic", "q"})
-    if (want.has(key)) EXPECT_EQ(shown.text(key), want.at(key).text) << key;
+    if (want.has(key)) {
+      EXPECT_EQ(shown.text(key), want.at(key).text) << key;
+    }
   if (want.has("df")) {
     ASSERT_EQ(shown.json().at("df").items.size(), 2u);
     for (std::size_t i = 0; i < 2; ++i) EXPECT_EQ(number(shown.json().at("df").items[i]), number(want.at("df").items[i])) << "df";
   }
-  if (want.has("level")) EXPECT_DOUBLE_EQ(number(shown.json().at("level")), number(want.at("level")));
-  if (want.has("critical"))
+  if (want.has("level")) {
+    EXPECT_DOUBLE_EQ(number(shown.json().at("level")), number(want.at("level")));
+  }
+  if (want.has("critical")) {
     EXPECT_TRUE(near(number(shown.json().at("critical")), number(want.at("critical")),
                      want.has("critical_rel") ? number(want.at("critical_rel")) : 1e-5, 1e-3))
         << "critical " << shown.text("critical");
-  if (want.at("asks").kind == Json::Kind::True) EXPECT_FALSE(shown.json().at("ask").items.empty()) << "nothing to ask for";
+  }
+  if (want.at("asks").kind == Json::Kind::True) {
+    EXPECT_FALSE(shown.json().at("ask").items.empty()) << "nothing to ask for";
+  }
   if (want.has("range")) expect_range(shown, want.at("range"));
   if (want.has("ends")) expect_ends(shown, want.at("ends"));
   if (want.has("p")) {
@@ -125,12 +132,14 @@ void compare(const Json& want, const Json& report) {
     EXPECT_LE(mine.low, value * (1 + slack) + 1e-12) << "the true value is left out";
     EXPECT_LE(value, mine.high * (1 + slack) + 1e-12) << "the true value is left out";
   }
-  if (want.has("not_below"))
+  if (want.has("not_below")) {
     EXPECT_GE(shown.range(want.at("not_below").at("key").text).low, number(want.at("not_below").at("value")) * (1 - 1e-6) - 1e-12)
         << "below what one restriction alone guarantees";
-  if (want.has("not_above"))
+  }
+  if (want.has("not_above")) {
     EXPECT_LE(shown.range(want.at("not_above").at("key").text).high, number(want.at("not_above").at("value")) * 1.001)
         << "above the greatest corner";
+  }
   if (want.has("high_within")) {
     const double high = shown.range("wald").high;
     EXPECT_GE(high, number(want.at("high_within").items[0]) * (1 - 1e-6));
@@ -141,7 +150,9 @@ void compare(const Json& want, const Json& report) {
       EXPECT_TRUE(near(i == 0 ? shown.range("share_rejecting").low : shown.range("share_rejecting").high,
                        number(want.at("share_rejecting")), 1e-9, 1e-3));
   if (want.has("does_not_reject")) expect_intervals(shown.json().at("correlation").at("does_not_reject"), want.at("does_not_reject"));
-  if (want.at("no_f").kind == Json::Kind::True) EXPECT_EQ(shown.json().at("f").kind, Json::Kind::Null);
+  if (want.at("no_f").kind == Json::Kind::True) {
+    EXPECT_EQ(shown.json().at("f").kind, Json::Kind::Null);
+  }
   if (want.at("audit_conflicts").kind == Json::Kind::True) {
     bool any = false;
     for (const Json& line : report.at("audit").items) any = any || line.at("match").text == "conflicts";

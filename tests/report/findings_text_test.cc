@@ -35,7 +35,9 @@ TEST(FindingsText, CountsEveryStateAtTheTop) {
 
 TEST(FindingsText, AsksForAFigureWheneverAClaimIsOpenOrHasNoTest) {
   for (const Finding& finding : checked(kFourStates).findings)
-    if (finding.state == State::Undecided || finding.state == State::NotComputable) EXPECT_FALSE(finding.ask.empty()) << finding.claim;
+    if (finding.state == State::Undecided || finding.state == State::NotComputable) {
+      EXPECT_FALSE(finding.ask.empty()) << finding.claim;
+    }
 }
 
 // Common practice in this house: the product's own voice never accuses.

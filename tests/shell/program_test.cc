@@ -15,13 +15,13 @@
 namespace rejoinder::testing {
 namespace {
 
-struct Run {
+struct Outcome {
   std::string out;  // standard output and standard error together
   int status = -1;
 };
 
-Run run(const std::string& arguments) {
-  Run result;
+Outcome run(const std::string& arguments) {
+  Outcome result;
   const std::string command = std::string("\"") + REJOINDER_PROGRAM + "\" " + arguments + " 2>&1";
   std::FILE* pipe = popen(command.c_str(), "r");
   if (!pipe) return result;
@@ -42,7 +42,7 @@ class File {
   std::string name_;
 };
 
-bool has(const Run& run, const std::string& text) { return run.out.find(text) != std::string::npos; }
+bool has(const Outcome& run, const std::string& text) { return run.out.find(text) != std::string::npos; }
 
 constexpr const char* kAgrees =
     "rejoinder = 1\ntitle = \"Agrees\"\n[[claim]]\nid = \"c\"\nf = \"4.21\"\ndf = [2, 410]\np = \".015\"\n";
@@ -54,15 +54,15 @@ TEST(Program, TellsByItsExitStatusWhetherAFindingConflicts) {
   EXPECT_EQ(run("check " + agrees.quoted()).status, 0);
   EXPECT_EQ(run("check " + conflicts.quoted()).status, 1);
   EXPECT_EQ(run("check " + broken.quoted()).status, 2);
-  const Run all = run("check " + agrees.quoted() + " " + broken.quoted() + " " + conflicts.quoted());
-  EXPECT_EQ(all.status, 2);
-  EXPECT_TRUE(has(all, "Agrees with the print")) << "a file that cannot be read hides no other";
-  EXPECT_TRUE(has(all, "Does not match the print"));
-  EXPECT_TRUE(has(all, "line 1"));
+  const Outcome everything = run("check " + agrees.quoted() + " " + broken.quoted() + " " + conflicts.quoted());
+  EXPECT_EQ(everything.status, 2);
+  EXPECT_TRUE(has(everything, "Agrees with the print")) << "a file that cannot be read hides no other";
+  EXPECT_TRUE(has(everything, "Does not match the print"));
+  EXPECT_TRUE(has(everything, "line 1"));
 }
 
 TEST(Program, SaysWhichFileCannotBeOpened) {
-  const Run missing = run("check no_such_file.toml");
+  const Outcome missing = run("check no_such_file.toml");
   EXPECT_EQ(missing.status, 2);
   EXPECT_TRUE(has(missing, "no_such_file.toml"));
 }
@@ -80,7 +80,7 @@ TEST(Program, PrintsFindingsAsJson) {
 
 // Derived: F = (0.341 - 0.312)/3 / ((1 - 0.341)/205) = 3.007; with every rounding 2.906 to 3.110.
 TEST(Program, WorksOutTwoFits) {
-  const Run fit = run("fit --r2 0.341 --r2-short 0.312 -n 212 -k 6 -q 3 --f 1.00 --json");
+  const Outcome fit = run("fit --r2 0.341 --r2-short 0.312 -n 212 -k 6 -q 3 --f 1.00 --json");
   EXPECT_EQ(fit.status, 1);
   const Json json = read_json(fit.out);
   const Json& finding = json.at("findings").items.at(0);
@@ -91,7 +91,7 @@ TEST(Program, WorksOutTwoFits) {
 
 // Derived: F >= max t² / q = (0.1305 / 0.0525)² / 2.
 TEST(Program, WorksOutLimitsFromStandardErrors) {
-  const Run limits = run("limits --term fare -0.131 0.052 --term fuel -0.040 0.071 -n 418 -k 7 --json");
+  const Outcome limits = run("limits --term fare -0.131 0.052 --term fuel -0.040 0.071 -n 418 -k 7 --json");
   EXPECT_EQ(limits.status, 0);
   const Json json = read_json(limits.out);
   const Json& f = json.at("findings").items.at(0).at("f");
@@ -101,7 +101,7 @@ TEST(Program, WorksOutLimitsFromStandardErrors) {
 
 TEST(Program, ReadsCoefficientsAndCovarianceFromCsv) {
   const File b("b.csv", "term,coefficient\nfare,0.52\nfuel price,0.31\n"), v("v.csv", "0.040,0.010\n0.010,0.030\n");
-  const Run wald = run("wald --coefficients " + b.quoted() + " --covariance " + v.quoted() + " --df 100 --json");
+  const Outcome wald = run("wald --coefficients " + b.quoted() + " --covariance " + v.quoted() + " --df 100 --json");
   EXPECT_EQ(wald.status, 0) << wald.out;
   const Json json = read_json(wald.out);
   const Json& finding = json.at("findings").items.at(0);
@@ -110,13 +110,13 @@ TEST(Program, ReadsCoefficientsAndCovarianceFromCsv) {
   EXPECT_LT(std::strtod(finding.at("wald").items.at(0).text.c_str(), nullptr), at_print);
   EXPECT_GT(std::strtod(finding.at("wald").items.at(1).text.c_str(), nullptr), at_print);
   const File short_v("short.csv", "0.040\n");
-  const Run refused = run("wald --coefficients " + b.quoted() + " --covariance " + short_v.quoted() + " --df 100");
+  const Outcome refused = run("wald --coefficients " + b.quoted() + " --covariance " + short_v.quoted() + " --df 100");
   EXPECT_EQ(refused.status, 2);
   EXPECT_TRUE(has(refused, "1 lines for 2 coefficients"));
 }
 
 TEST(Program, TeachesByExamples) {
-  const Run help = run("--help");
+  const Outcome help = run("--help");
   EXPECT_EQ(help.status, 0);
   EXPECT_TRUE(has(help, "rejoinder check paper.toml"));
   EXPECT_TRUE(has(help, "Exit status"));

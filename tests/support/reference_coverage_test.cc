@@ -58,8 +58,9 @@ TEST(ReferenceCoverage, EveryKindIsUsedOrListedWithAReason) {
     for (const std::string& kind : reference_kinds(file)) {
       SCOPED_TRACE(std::string(file) + ": " + kind);
       const bool listed = !reason_not_yet(file, kind).empty();
-      if (is_covered(file, kind))
+      if (is_covered(file, kind)) {
         EXPECT_FALSE(listed) << "a test uses this kind now: take its row out of kNotYet";
+      }
       else
         EXPECT_TRUE(listed) << "no test uses this kind: add one with CoversKinds, or a row with the reason";
     }
