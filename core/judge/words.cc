@@ -33,12 +33,24 @@ std::string test_name(const Finding& finding) {
   return "F(" + std::to_string(finding.q) + ", " + df_text(finding.df->denominator) + ")";
 }
 
+// "p = .03", "p < .001": the paper's own figure, with a blank after its sign.
+std::string p_reported(const PrintedNumber& p) {
+  std::string text = p.text;
+  if (text.rfind("p", 0) == 0) return text;
+  if (p.relation == Relation::Equal) return "p = " + text;
+  for (const char* sign : {"<", ">", "≤", "≥"}) {
+    const std::size_t length = std::string(sign).size();
+    if (text.rfind(sign, 0) == 0 && text.size() > length && text[length] != ' ') text.insert(length, " ");
+  }
+  return "p " + text;
+}
+
 std::string reported_text(const Claim& claim) {
   std::string out;
   const auto add = [&](const std::string& piece) { out += (out.empty() ? "" : ", ") + piece; };
   if (claim.f) add("F = " + claim.f->text);
   if (claim.chi2) add("χ² = " + claim.chi2->text);
-  if (claim.p) add(claim.p->relation == Relation::Equal ? "p = " + claim.p->text : "p " + claim.p->text);
+  if (claim.p) add(p_reported(*claim.p));
   if (claim.stars) add(std::to_string(*claim.stars) + (*claim.stars == 1 ? " star" : " stars"));
   return out;
 }

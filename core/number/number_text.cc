@@ -88,6 +88,7 @@ std::string range_text(const Interval& range) {
 }
 
 std::string p_range_text(const Interval& range) {
+  if (range.low <= 0 && range.high >= 1) return "not limited";
   if (range.high < 0.001) return "below .001";
   if (range.low <= 0 || range.low < 0.001) return "at most " + p_text(range.high, ShowRounding::Up);
   const std::string low = p_text(range.low, ShowRounding::Down), high = p_text(range.high, ShowRounding::Up);
