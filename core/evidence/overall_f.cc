@@ -5,6 +5,7 @@
 
 #include "core/convex/one_correlation.h"
 #include "core/evidence/column_limits.h"
+#include "core/evidence/two_slopes.h"
 #include "core/number/number_text.h"
 
 namespace rejoinder {
@@ -43,8 +44,7 @@ bool tests_slopes_only(const JointTest& test) {
   });
 }
 
-// Two slopes: their t ratios and the overall F leave at most two ranges for the correlation of the estimates. Limits over each,
-// joined.
+// Two slopes: their t ratios and the overall F leave at most two ranges for the correlation of the estimates.
 RouteAnswer two_slopes(const JointTest& test, const OverallF& whole) {
   RouteAnswer out;
   const Column& column = *test.column;
@@ -71,37 +71,33 @@ RouteAnswer two_slopes(const JointTest& test, const OverallF& whole) {
     out.clashes.push_back(std::move(clash));
     return out;
   }
-  std::vector<std::string> roots;
-  for (const Interval& range : ranges) {
-    ColumnSet one = set;
-    one.set.correlations.push_back({0, 1, {step_down(range.low), step_up(range.high)}});
-    one.facts = 1;
-    RouteAnswer part = evidence_of(test, one, Route::Facts);
-    roots.push_back(number_text(range.low) + " to " + number_text(range.high));
-    if (!part.evidence) continue;
-    if (!out.evidence) {
-      out = std::move(part);
-    } else {
-      Evidence& e = *out.evidence;
-      e.wald = join(e.wald, part.evidence->wald);
-      e.low = std::max(e.low, part.evidence->low);
-      e.high = std::max(e.high, part.evidence->high);
-      if (e.attained && part.evidence->attained) e.attained = join(*e.attained, *part.evidence->attained);
-    }
+  if (test.q != 1) return out;
+  TwoSlopes slopes;
+  for (std::size_t i = 0; i < 2; ++i) {
+    slopes.b[i] = set.limits[i].b;
+    slopes.s[i] = set.limits[i].s;
+    slopes.a[i] = set.R(0, static_cast<int>(i));
+    if (!std::isfinite(slopes.b[i].low) || !std::isfinite(slopes.b[i].high) || !std::isfinite(slopes.s[i].high)) return out;
   }
-  if (!out.evidence) return out;
-  Evidence& e = *out.evidence;
-  // Each range holds more than the roots themselves do, as t and F move within their rounding.
-  e.low = std::max(e.low, Sharpness::Guaranteed);
-  e.high = std::max(e.high, Sharpness::Guaranteed);
-  e.attained.reset();
+  slopes.f = whole.f;
+  slopes.r = set.r(0);
+  const auto limits = two_slopes_limits(slopes);
+  if (!limits) return out;
+  Evidence e;
+  e.route = Route::Facts;
+  e.df = test.df;
+  e.wald = limits->wald;
+  e.attained = limits->attained;
+  e.low = e.high = Sharpness::Guaranteed;
   e.p = p_of_wald(test, e.wald);
-  e.working.clear();
-  e.working.push_back("two slopes and " + whole.from + ": the correlation of the estimates lies within " +
-                      (roots.size() == 1 ? roots[0] : roots[0] + " or " + roots[1]));
+  std::string roots;
+  for (const Interval& range : ranges) roots += (roots.empty() ? "" : " or ") + number_text(range.low) + " to " + number_text(range.high);
+  e.working.push_back("two slopes and " + whole.from + ": the correlation of the estimates lies within " + roots);
   e.working.push_back("over these F lies between " + number_text(e.wald.low / test.q, ShowRounding::Down) + " and " +
                       number_text(e.wald.high / test.q, ShowRounding::Up));
+  e.rests_on = set.cells;
   e.rests_on.insert(e.rests_on.end(), whole.cells.begin(), whole.cells.end());
+  out.evidence = std::move(e);
   return out;
 }
 
