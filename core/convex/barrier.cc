@@ -3,6 +3,8 @@
 #include <algorithm>
 #include <cassert>
 #include <cmath>
+#include <numeric>
+#include <vector>
 
 namespace rejoinder {
 namespace {
@@ -13,20 +15,46 @@ constexpr double kGrowth = 12;
 constexpr double kGap = 1e-10;      // relative
 constexpr double kTinyGap = 1e-14;  // in the scaled units, where values are of order one
 
-// Newton direction; rows and columns are brought to unit diagonal first, and a little is added to the
-// diagonal when rounding has left the matrix not positive.
-Eigen::VectorXd newton(const Eigen::MatrixXd& hessian, const Eigen::VectorXd& gradient) {
+// Newton direction: Cholesky after rows and columns are brought to unit diagonal. False when rounding has
+// left the matrix not positive.
+bool newton(const Eigen::MatrixXd& hessian, const Eigen::VectorXd& gradient, Eigen::VectorXd& step) {
   const Eigen::VectorXd scale = hessian.diagonal().cwiseAbs().cwiseMax(1e-300).cwiseSqrt().cwiseInverse();
   const Eigen::MatrixXd H = scale.asDiagonal() * hessian * scale.asDiagonal();
   const Eigen::VectorXd g = scale.cwiseProduct(gradient);
-  for (double ridge = 0; ridge < 1e-3; ridge = ridge == 0 ? 1e-15 : ridge * 100) {
-    Eigen::LLT<Eigen::MatrixXd> llt(H + ridge * Eigen::MatrixXd::Identity(H.rows(), H.cols()));
-    if (llt.info() != Eigen::Success) continue;
-    Eigen::VectorXd step = llt.solve(-g);
-    step += llt.solve(-g - H * step);
-    if (step.allFinite()) return scale.cwiseProduct(step);
-  }
-  return Eigen::VectorXd::Zero(gradient.size());
+  const Eigen::LLT<Eigen::MatrixXd> llt(H);
+  if (llt.info() != Eigen::Success) return false;
+  step = llt.solve(-g);
+  step += llt.solve(-g - H * step);
+  step = scale.cwiseProduct(step);
+  return step.allFinite();
+}
+
+// The same from J with J'J the Hessian, by QR: half as many digits are lost. Large rows come first, which
+// keeps the small ones accurate (Cox and Higham 1998, BIT 38; from memory).
+bool newton_by_root(const Eigen::MatrixXd& J, const Eigen::VectorXd& gradient, Eigen::VectorXd& step) {
+  const Eigen::VectorXd scale = J.colwise().norm().transpose().cwiseMax(1e-300).cwiseInverse();
+  Eigen::MatrixXd sorted(J.rows(), J.cols());
+  std::vector<int> order(J.rows());
+  std::iota(order.begin(), order.end(), 0);
+  const Eigen::VectorXd size = (J * scale.asDiagonal()).rowwise().norm();
+  std::sort(order.begin(), order.end(), [&](int i, int j) { return size(i) > size(j); });
+  for (int i = 0; i < J.rows(); ++i) sorted.row(i) = J.row(order[i]) * scale.asDiagonal();
+  const Eigen::ColPivHouseholderQR<Eigen::MatrixXd> qr(sorted);
+  const int n = static_cast<int>(J.cols());
+  if (J.rows() < n) return false;
+  const Eigen::MatrixXd R = qr.matrixR().topLeftCorner(n, n).triangularView<Eigen::Upper>();
+  if (!(R.diagonal().cwiseAbs().minCoeff() > 0)) return false;
+  const auto solve = [&](const Eigen::VectorXd& right) -> Eigen::VectorXd {
+    Eigen::VectorXd y = qr.colsPermutation().transpose() * right;
+    R.transpose().triangularView<Eigen::Lower>().solveInPlace(y);
+    R.triangularView<Eigen::Upper>().solveInPlace(y);
+    return qr.colsPermutation() * y;
+  };
+  const Eigen::VectorXd g = scale.cwiseProduct(gradient);
+  step = solve(-g);
+  step += solve(-g - sorted.transpose() * (sorted * step));
+  step = scale.cwiseProduct(step);
+  return step.allFinite();
 }
 
 }  // namespace
@@ -163,7 +191,14 @@ void Barrier::step() {
     g = N.transpose() * gradient;
     H = N.transpose() * hessian * N;
   }
-  step_taken = newton(H, g);
+  if (!newton(H, g, step_taken)) {
+    Eigen::MatrixXd used(n + 1, size);
+    used.setZero();
+    used.topLeftCorner(n, free) = directions;
+    if (extra) used(last, free) = 1;
+    if (!newton_by_root(model_->hessian_root(x_, tau_, with_border()) * used, g, step_taken))
+      step_taken = Eigen::VectorXd::Zero(size);
+  }
   const double decrement = -g.dot(step_taken);
   Eigen::VectorXd dx = directions * step_taken.head(free);
   double dtau = 0;

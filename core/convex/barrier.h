@@ -64,6 +64,9 @@ class Barrier {
   const ConvexFacts& facts() const { return facts_; }
   Eigen::VectorXd coefficients() const;  // p
   Eigen::MatrixXd covariance() const;    // p by p
+  // The coefficients whose entries of V are meant by that: those that the rows or facts shared with them
+  // mention.
+  const std::vector<int>& taking_part() const { return model_->taking_part(); }
 
  private:
   void begin();

@@ -19,9 +19,17 @@ double log_determinant(const Eigen::MatrixXd& Z) {
   return 2 * sum;
 }
 
-Eigen::MatrixXd inverse(const Eigen::MatrixXd& Z) {
+// W with W'W = Z^-1: the inverse of the Cholesky factor.
+Eigen::MatrixXd root_of_inverse(const Eigen::MatrixXd& Z) {
   const Eigen::LLT<Eigen::MatrixXd> llt(Z);
-  return llt.solve(Eigen::MatrixXd::Identity(Z.rows(), Z.rows()));
+  return llt.matrixL().solve(Eigen::MatrixXd::Identity(Z.rows(), Z.rows()));
+}
+
+// As W'W: symmetric and without negative eigenvalue however near the matrix
+// is to singular, so that the Hessian made of it stays positive.
+Eigen::MatrixXd inverse(const Eigen::MatrixXd& Z) {
+  const Eigen::MatrixXd W = root_of_inverse(Z);
+  return W.transpose() * W;
 }
 
 // First and second derivative of -log det along entries (i, j) and (k, l) of the matrix whose inverse is P.
@@ -184,6 +192,57 @@ void BarrierModel::derivatives(const Eigen::VectorXd& x, double tau, bool with_b
     for (int v = 0; v < u; ++v) hessian(v, u) = hessian(u, v);
     hessian(n, u) = hessian(u, n);
   }
+}
+
+Eigen::MatrixXd BarrierModel::hessian_root(const Eigen::VectorXd& x, double tau, bool with_border) const {
+  const int n = unknowns();
+  const auto packed = [](int order) { return order * (order + 1) / 2; };
+  const int rows = packed(size_) + (with_border ? packed(rows_ + 1) : 0) +
+                   3 * static_cast<int>(caps_.size()) + static_cast<int>(slacks_.size());
+  Eigen::MatrixXd J = Eigen::MatrixXd::Zero(rows, n + 1);
+  int at = 0;
+  // A change B of a matrix with inverse W'W weighs |W B W'|^2: one row an entry, those off the diagonal sqrt
+  // 2 fold.
+  const auto put = [&](const Eigen::MatrixXd& change, int column) {
+    int row = at;
+    for (int i = 0; i < change.rows(); ++i)
+      for (int j = 0; j <= i; ++j) J(row++, column) += i == j ? change(i, i) : std::sqrt(2.0) * change(i, j);
+  };
+  const auto along = [](const Eigen::MatrixXd& W, int i, int j) -> Eigen::MatrixXd {
+    const Eigen::MatrixXd half = W.col(i) * W.col(j).transpose();
+    if (i == j) return half;
+    return half + half.transpose();
+  };
+  const Eigen::MatrixXd W = root_of_inverse(shifted(x, tau));
+  for (int u = 0; u < n; ++u)
+    if (places_[u].i >= 0 && places_[u].i < size_) put(along(W, places_[u].i, places_[u].j), u);
+  put(W * W.transpose(), n);
+  at += packed(size_);
+  if (with_border) {
+    Eigen::MatrixXd T = Eigen::MatrixXd::Zero(rows_ + 1, size_ + 1);
+    T.topLeftCorner(rows_, size_) = R_;
+    T(rows_, size_) = 1;
+    const Eigen::MatrixXd WT = root_of_inverse(border(x, tau, offset_)) * T;
+    for (int u = 0; u < n; ++u)
+      if (places_[u].i >= 0) put(along(WT, places_[u].i, places_[u].j), u);
+    put(WT.leftCols(size_) * WT.leftCols(size_).transpose(), n);
+    at += packed(rows_ + 1);
+  }
+  for (const CapBlock& cap : caps_) {
+    const Eigen::MatrixXd C = root_of_inverse(cap_matrix(cap, x, tau));
+    put(cap.limit * along(C, 0, 0), cap.first);
+    put(cap.limit * along(C, 1, 1), cap.second);
+    put(along(C, 0, 1), cap.off);
+    put(C * C.transpose(), n);
+    at += 3;
+  }
+  for (const Slack& slack : slacks_) {
+    const double s = slack_value(slack, x, tau);
+    for (const auto& [unknown, weight] : slack.cells) J(at, unknown) += weight / s;
+    J(at, n) += 1 / s;
+    ++at;
+  }
+  return J;
 }
 
 BarrierModel::Dual BarrierModel::dual(const Eigen::VectorXd& x, double tau, const Eigen::VectorXd& dx,

@@ -30,8 +30,9 @@ class BarrierModel {
 
   int unknowns() const { return static_cast<int>(places_.size()); }
   bool bordered() const { return rows_ > 0; }
-  int border_unknown() const { return border_unknown_; }  // of w; -1 without rows
-  double complexity(bool with_border) const;              // the sum of the orders of all blocks and slacks
+  const std::vector<int>& taking_part() const { return taking_part_; }  // m columns of the set, ascending
+  int border_unknown() const { return border_unknown_; }                // of w; -1 without rows
+  double complexity(bool with_border) const;  // the sum of the orders of all blocks and slacks
 
   // A start: middles of intervals, w left at 0. `equality_residual` is what the exact facts leave
   // unsatisfied.
@@ -54,6 +55,8 @@ class BarrierModel {
   // Gradient (n + 1) and Hessian (n + 1 square) of the barrier; the last place is tau.
   void derivatives(const Eigen::VectorXd& x, double tau, bool with_border, Eigen::VectorXd& gradient,
                    Eigen::MatrixXd& hessian) const;
+  // J (rows by n + 1) with J'J the Hessian: for the last steps, where the Hessian itself has lost its digits.
+  Eigen::MatrixXd hessian_root(const Eigen::VectorXd& x, double tau, bool with_border) const;
 
   // Multipliers of the point x with Newton step dx, dtau at weight kappa: the change of each block to first
   // order is taken in, which makes them satisfy the dual equations up to rounding. `objective` (n) is what is

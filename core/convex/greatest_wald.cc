@@ -58,6 +58,52 @@ WaldWitness corner_witness(const AdmissibleSet& set, const Eigen::MatrixXd& R, c
   return make_witness(set, R, r, b, V);
 }
 
+// The greatest W with every standard error held at one value, where correlations are entries and the set
+// convex; from below only. `calls` bounds the work.
+WaldWitness with_errors_held(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Eigen::VectorXd& r,
+                             const Eigen::VectorXd& s, const GreatestEffort& effort, int calls) {
+  AdmissibleSet held = set;
+  held.se_low = held.se_high = s;
+  const EntryBox box = entry_box(held, R, r);
+  if (box.known && static_cast<int>(box.columns.size()) <= std::min(effort.corner_limit, 8)) {
+    const Corners corners = sign_corners(box);
+    if (corners.all_definite) {
+      const WaldWitness witness = corner_witness(held, R, r, box, corners);
+      if (witness.outside <= 1e-9) return witness;
+    }
+  }
+  LeastVariance variance(held);
+  if (!variance.usable()) return {};
+  return ascend(held, R, r, variance, 2, calls);
+}
+
+// Where correlation ranges and rounded standard errors make the set not convex: one standard error after the
+// other is moved to its other end while that raises W.
+WaldWitness over_errors(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Eigen::VectorXd& r,
+                        const GreatestEffort& effort) {
+  Eigen::VectorXd s = (set.se_low + set.se_high) / 2;
+  const int calls = 12;
+  WaldWitness best = with_errors_held(set, R, r, s, effort, calls);
+  for (int pass = 0; pass < 2; ++pass) {
+    bool moved = false;
+    for (int j = 0; j < set.size(); ++j) {
+      if (R.col(j).isZero(0) || set.se_low(j) == set.se_high(j)) continue;
+      for (const double end : {set.se_low(j), set.se_high(j)}) {
+        if (s(j) == end || end == 0) continue;
+        Eigen::VectorXd tried = s;
+        tried(j) = end;
+        const WaldWitness now = with_errors_held(set, R, r, tried, effort, calls);
+        if (now.V.size() == 0 || !(now.wald > best.wald) || now.outside > 1e-9) continue;
+        best = now;
+        s = tried;
+        moved = true;
+      }
+    }
+    if (!moved) break;
+  }
+  return best;
+}
+
 GreatestWald search(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Eigen::VectorXd& r,
                     const GreatestEffort& effort) {
   GreatestWald greatest;
@@ -120,7 +166,7 @@ GreatestWald search(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Ei
     greatest.method = "no interior point of the facts on V was found";
     return greatest;
   }
-  const int calls = variance.calls_within(0.3);
+  const int calls = variance.calls_within(0.15);
   if (!definite) {
     if (const auto singular = singular_point(inner, R, r, variance, effort.starts, calls)) {
       GreatestWald answer = infinite("a covariance matrix of the set gives a combination no variance");
@@ -134,9 +180,18 @@ GreatestWald search(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Ei
     greatest.witness = climbed;
     greatest.attained = climbed.wald;
   }
-  if (!widened && q <= 4 && facts.exact) {
-    const ConeSearch cones = search_cones(inner, R, r, variance, greatest.attained, effort.agreement,
-                                          effort.cone_limit, variance.calls_within(1));
+  if (!widened && !facts.exact) {
+    const WaldWitness held = over_errors(set, R, r, effort);
+    if (held.wald > greatest.attained && distance_outside(set, held.b, held.V) <= 1e-9) {
+      greatest.witness = held;
+      greatest.attained = held.wald;
+    }
+  }
+  if (!widened && q <= 4) {
+    // Over a wider convex set the bound still holds, but there is no use in closing its last digits.
+    const ConeSearch cones = search_cones(
+        inner, R, r, variance, greatest.attained, facts.exact ? effort.agreement : 1e-3,
+        facts.exact ? effort.cone_limit : std::min(effort.cone_limit, 60), variance.calls_within(0.8));
     if (cones.guaranteed < greatest.guaranteed) {
       greatest.guaranteed = cones.guaranteed;
       greatest.method =

@@ -15,6 +15,22 @@ bool agree(double guaranteed, double attained) {
   return attained - guaranteed <= 1e-8 * std::max(attained, 1e-8);
 }
 
+// V of the barrier on the coefficients that take part; any V of the set on the others, to which no fact ties
+// them.
+Eigen::MatrixXd completed(const AdmissibleSet& set, const Barrier& barrier) {
+  const Eigen::MatrixXd V = barrier.covariance();
+  const std::vector<int>& part = barrier.taking_part();
+  if (static_cast<int>(part.size()) == set.size() || distance_outside(set, barrier.coefficients(), V) < 1e-9)
+    return V;
+  Barrier whole(set);
+  whole.run();
+  if (!whole.has_interior()) return V;
+  Eigen::MatrixXd all = whole.covariance();
+  for (const int i : part)
+    for (int j = 0; j < set.size(); ++j) all(i, j) = all(j, i) = V(i, j);
+  return all;
+}
+
 LeastWald by_barrier(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Eigen::VectorXd& r) {
   Barrier barrier(set, R, r);
   barrier.run();
@@ -37,7 +53,7 @@ LeastWald by_barrier(const AdmissibleSet& set, const Eigen::MatrixXd& R, const E
   least.attained = barrier.attained();
   least.exact = barrier.facts().exact && agree(least.wald, least.attained);
   if (std::isfinite(least.attained))
-    least.witness = make_witness(set, R, r, barrier.coefficients(), barrier.covariance());
+    least.witness = make_witness(set, R, r, barrier.coefficients(), completed(set, barrier));
   // The standard errors alone, or with a common cap, may prove a little more with the same combination.
   const double from_errors =
       guaranteed_wald_from_errors(set, R, r, least.weights, least.multipliers.coefficient_facts);
