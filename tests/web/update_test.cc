@@ -114,6 +114,53 @@ TEST(Update, MakesTypingInOneCellOneStep) {
   EXPECT_EQ(state.document, before);
 }
 
+TEST(Update, TakesATermIntoAColumnThatDidNotListItWhenAFigureIsTyped) {
+  AppState state = opened();
+  update(state, ChooseCell{std::nullopt});
+  const Node before = state.document;
+  for (const char* text : {"1", "1.", "1.1"}) update(state, EditFigure{0, "snow days", "coef", text});
+  EXPECT_EQ(term_names(state.document, 0), (std::vector<std::string>{"staff", "snow days"}));
+  EXPECT_EQ(cell_text(state.document, {0, 1, "coef"}), "1.1");
+  EXPECT_EQ(state.cell, (TableCell{0, 1, "coef"}));
+  // As the grid goes on once the term is listed: still the same step.
+  update(state, EditCell{{0, 1, "coef"}, "1.10"});
+  update(state, Undo{});
+  EXPECT_EQ(state.document, before);
+  update(state, Redo{});
+  EXPECT_EQ(cell_text(state.document, {0, 1, "coef"}), "1.10");
+}
+
+TEST(Update, PutsATakenTermWhereTheOtherColumnsHaveIt) {
+  AppState state = opened();
+  update(state, AddTerm{"slope"});
+  update(state, RemoveTerm{"staff"});
+  // "snow days" stands above "slope" in the second column, so it goes above it in the first.
+  ASSERT_EQ(term_names(state.document, 0), (std::vector<std::string>{"slope"}));
+  update(state, EditFigure{0, "snow days", "se", "0.3"});
+  EXPECT_EQ(term_names(state.document, 0), (std::vector<std::string>{"snow days", "slope"}));
+  EXPECT_EQ(cell_text(state.document, {0, 0, "se"}), "0.3");
+}
+
+TEST(Update, DropsANoticeWithTheNextChange) {
+  AppState state = opened();
+  EXPECT_FALSE(state.notice.empty());
+  update(state, EditCell{{1, 1, "coef"}, "1.20"});  // as it was
+  EXPECT_FALSE(state.notice.empty());
+  update(state, EditCell{{1, 1, "coef"}, "1.21"});
+  EXPECT_EQ(state.notice, "");
+}
+
+TEST(Update, LeavesAColumnAsItIsWhereNothingOrAnUnknownTermIsTyped) {
+  AppState state = opened();
+  const Node before = state.document;
+  update(state, EditFigure{0, "snow days", "coef", ""});
+  update(state, EditFigure{0, "snow days", "coef", "  "});
+  update(state, EditFigure{0, "no such term", "coef", "1.0"});
+  update(state, EditFigure{7, "snow days", "coef", "1.0"});
+  EXPECT_EQ(state.document, before);
+  EXPECT_EQ(state.history.past.size(), 1u);  // the review that was opened
+}
+
 TEST(Update, StartsANewStepAfterLookingElsewhere) {
   AppState state = opened();
   update(state, ChooseCell{TableCell{1, 1, "coef"}});

@@ -100,6 +100,27 @@ int new_column(Node& document) {
   return column;
 }
 
+// Where `name` belongs in a column that does not list it: behind the nearest term above it in a column that
+// does, else before the nearest one below it, else at the end. -1 where no column lists it.
+int place_in_other_columns(const Node& document, int column, const std::string& name) {
+  int place = -1;
+  for (int c = 0; c < count_of(document, "column"); ++c) {
+    const std::vector<std::string> names = term_names(document, c);
+    const int there = c == column ? -1 : term_index(document, c, name);
+    if (there < 0) continue;
+    for (int above = there - 1; above >= 0; --above) {
+      const int here = term_index(document, column, names[static_cast<std::size_t>(above)]);
+      if (here >= 0) return here + 1;
+    }
+    for (std::size_t below = static_cast<std::size_t>(there) + 1; below < names.size(); ++below) {
+      const int here = term_index(document, column, names[below]);
+      if (here >= 0) return here;
+    }
+    place = static_cast<int>(term_names(document, column).size());
+  }
+  return place;
+}
+
 std::string at(std::string_view what, int index, const std::string& key) {
   return std::string(what) + " " + std::to_string(index) + " / " + key;
 }
@@ -115,6 +136,18 @@ Change carry_out(Node& document, const EditCell& intent) {
   path.push_back({cell.key});
   put(document, path, field_of(cell.key), clean_text(intent.text, false));
   return {at("column", cell.column, at("term", cell.term, cell.key)), "", std::nullopt};
+}
+
+Change carry_out(Node& document, const EditFigure& intent) {
+  int term = term_index(document, intent.column, intent.term);
+  if (term < 0) {
+    term = place_in_other_columns(document, intent.column, intent.term);
+    if (term < 0 || trimmed_text(intent.text).empty()) return {};
+    const int added = add_term(document, intent.column, intent.term);
+    if (added < 0) return {};
+    move_item(document, {{"column", intent.column}, {"term"}}, added, term);
+  }
+  return carry_out(document, EditCell{{intent.column, term, intent.key}, intent.text});
 }
 
 Change carry_out(Node& document, const RenameTerm& intent) {

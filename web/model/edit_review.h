@@ -17,6 +17,8 @@ struct Change {
 // Each changes `document` as asked and leaves it as it was where the place does not exist. Text that cannot
 // be read as its field wants it is kept as typed: reading the review lists it under the problems.
 Change carry_out(Node& document, const EditCell& intent);
+// The term is put where the other columns have it, so that the rows of the table stay in order.
+Change carry_out(Node& document, const EditFigure& intent);
 Change carry_out(Node& document, const RenameTerm& intent);
 Change carry_out(Node& document, const AddTerm& intent);
 Change carry_out(Node& document, const RemoveTerm& intent);

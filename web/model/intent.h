@@ -13,6 +13,12 @@ struct EditCell {
   TableCell cell;
   std::string text;
 };  // empty text takes the figure away
+struct EditFigure {
+  int column;
+  std::string term;
+  std::string key;
+  std::string text;
+};  // the same by the term's name; a term that the column does not list yet is added to it
 struct RenameTerm {
   int column;
   int term;
@@ -122,7 +128,7 @@ struct OpenReport {};  // the same in a tab
 struct OpenFile {};
 struct PrintPage {};
 
-using Intent = std::variant<std::monostate, EditCell, RenameTerm, AddTerm, RemoveTerm, AddColumn,
+using Intent = std::variant<std::monostate, EditCell, EditFigure, RenameTerm, AddTerm, RemoveTerm, AddColumn,
                             RemoveColumn, EditColumn, EditReview, AddClaim, EditClaim, TickTerms, RemoveClaim,
                             DuplicateClaim, MoveClaim, NewReview, LoadText, PasteText, FiveFigures, Undo,
                             Redo, ChooseClaim, ChooseCell, ShowOverlay, EditBox, AcceptBox, ToggleDrawer,

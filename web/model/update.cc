@@ -45,6 +45,15 @@ class Updater {
     put(std::move(next), change);
   }
 
+  void operator()(const EditFigure& intent) {
+    Node next = state_.document;
+    const Change change = carry_out(next, intent);
+    const int term = term_index(next, intent.column, intent.term);
+    // Before the change: what is chosen belongs to the step of undo.
+    if (term >= 0) operator()(ChooseCell{TableCell{intent.column, term, intent.key}});
+    put(std::move(next), change);
+  }
+
   void operator()(const AddClaim& intent) {
     Node next = state_.document;
     Node claim = Node::table(false);
@@ -188,8 +197,10 @@ class Updater {
  private:
   // Every change of the review: the history first, then the tree, then all that follows from it.
   void put(Node next, const Change& change) {
-    if (!change.notice.empty()) state_.notice = change.notice;
-    if (next == state_.document) return;
+    const bool changed = !(next == state_.document);
+    // A notice of an earlier change says nothing of this one.
+    if (changed || !change.notice.empty()) state_.notice = change.notice;
+    if (!changed) return;
     remember(state_.history, state_.document, change.edit);
     state_.document = std::move(next);
     if (change.claim) state_.claim = *change.claim;
