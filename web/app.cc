@@ -31,6 +31,7 @@ AppState state;
 Hands hands;
 bool companion_is_stale = true;
 std::string told_notice;  // the last notice that was announced
+std::string told_kept;    // what the text region says of the keeping
 std::vector<OtherReview> others;
 
 std::string mime_of(const std::string& name) {
@@ -213,9 +214,15 @@ void app_draw(const FrameInfo& frame) {
 
 std::string app_store() { return stored_text(state); }
 
-bool app_companion_changed() { return std::exchange(companion_is_stale, false); }
+bool app_companion_changed() {
+  if (kept_words() != told_kept) companion_is_stale = true;
+  return std::exchange(companion_is_stale, false);
+}
 
-std::string app_companion_html() { return companion_html(state); }
+std::string app_companion_html() {
+  told_kept = kept_words();
+  return companion_html(state) + "<p>The review: " + escaped(told_kept) + "; " + kNothingSent + ".</p>\n";
+}
 
 void app_open_file(std::string_view name, std::string_view text) {
   carry_out(LoadText{std::string(name), std::string(text)});

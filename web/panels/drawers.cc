@@ -214,7 +214,9 @@ Intent show_drawers(const AppState& state, Hands& hands, const Finding& finding,
       close_drawer(pen);
     }
   };
-  if (finding.state == State::Conflicts) explain();
+  // Nothing is said of slips where none was looked for.
+  const bool looked = finding.slips_tried > 0 || !finding.slips.empty();
+  if (looked && finding.state == State::Conflicts) explain();
   if (finding.state == State::Undecided || finding.state == State::NotComputable) settle();
 
   const std::string lines =

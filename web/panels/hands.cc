@@ -53,6 +53,7 @@ Press Hands::press(std::string_view id, const char* kind, const ImVec2& low, con
   Press press = drag(id, kind, low, high);
   press.focused = focus_ == id;
   press.ring = press.focused && by_keyboard_;
+  if (press.focused) mark(id, "focus", low, high);  // a second mark, of the kind that tells where it stands
   if (press.focused && reveal_) {
     const ImVec2 room(px(12), px(24));
     ImGui::ScrollToRect(

@@ -2,7 +2,8 @@
 //
 // The page keeps its own focus rather than ImGui's, so that one order of stops runs through all panes, every
 // stop is scrolled into sight, and the cells of the table can move as cells of a table do. A stop is anything
-// that can be focused; it has the name that the tests know it by: "button/save", "claim/2", "cell/0/1/coef".
+// that can be focused; it has the name that the tests know it by: "button/save", "claim/2",
+// "cell/0/fare/coef".
 #pragma once
 
 #include <array>

@@ -217,7 +217,7 @@ void show_menu(Hands& hands) {
       continue;
     }
     const ImVec2 item_low(origin.x + px(4), y), item_high(origin.x + width - px(6), y + row);
-    const Press press = hands.drag("menu/" + std::to_string(i), "menuitem", item_low, item_high);
+    const Press press = hands.drag("menu/" + item, "menuitem", item_low, item_high);
     if (press.hovered && (ImGui::GetIO().MouseDelta.x != 0 || ImGui::GetIO().MouseDelta.y != 0)) menu.at = i;
     if (menu.at == i) {
       ImGui::GetWindowDrawList()->AddRectFilled(item_low, item_high,

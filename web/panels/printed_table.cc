@@ -82,12 +82,15 @@ PrintedTable printed_table(const AppState& state, bool all_figures) {
                               [&](const TermRow& r) { return r.name == name && r.term[column] < 0; });
       if (row == table.rows.end()) {
         row = table.rows.insert(table.rows.begin() + static_cast<long>(after),
-                                {name, std::vector<int>(static_cast<size_t>(table.columns), -1)});
+                                {name, std::vector<int>(static_cast<size_t>(table.columns), -1), {}});
       }
       row->term[column] = at++;
       after = static_cast<size_t>(row - table.rows.begin()) + 1;
     }
   }
+  std::set<std::string> stops = {""};
+  for (TermRow& row : table.rows)
+    row.stop = stops.insert(row.name).second ? row.name : "#" + std::to_string(&row - table.rows.data());
   for (const Foot& foot : kFoot) {
     bool shown = foot.always || all_figures;
     for (int c = 0; c < table.columns && !shown; ++c) {

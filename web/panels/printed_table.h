@@ -16,6 +16,7 @@ namespace rejoinder {
 struct TermRow {
   std::string name;
   std::vector<int> term;
+  std::string stop;  // the name, or the place where that is no name of its own: for focus and marks
 };
 
 // A line of the foot.

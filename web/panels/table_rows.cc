@@ -32,18 +32,14 @@ void plain_name(TableGrid& grid, std::string_view name, float y, Type type, ImU3
 
 }  // namespace
 
-void TableGrid::take(const std::string& id, const CellAnswer& answer, const TableCell* cell) {
-  if (answer.move.columns || answer.move.lines) {
-    moved_from = id;
-    move = answer.move;
-  }
-  if (cell && answer.hovered) pointed = *cell;
-  if (cell && answer.chosen) intent = ChooseCell{*cell};
-  if (cell && answer.text) intent = EditCell{*cell, *answer.text};
+void TableGrid::take(const std::string& id, const CellAnswer& answer) {
+  if (!answer.move.columns && !answer.move.lines) return;
+  moved_from = id;
+  move = answer.move;
 }
 
-std::string TableGrid::figure(const CellFacts& fact, const std::string& id, float y, float height, Type type,
-                              ImU32 colour, bool brackets) {
+std::string TableGrid::figure(const CellFacts& fact, const std::string& name, const std::string& id, float y,
+                              float height, Type type, ImU32 colour, bool brackets) {
   const TableCell& cell = fact.cell;
   const Measure& m = layout.measures[static_cast<size_t>(cell.column)];
   CellBox box{ImVec2(m.left, y),
@@ -56,7 +52,15 @@ std::string TableGrid::figure(const CellFacts& fact, const std::string& id, floa
   CellLook look;
   look.rests = fact.rests;
   look.trouble = fact.trouble;
-  take(id, show_cell(hands, id, fact.text, box, look, state.review.decimal), &cell);
+  const CellAnswer answer = show_cell(hands, id, fact.text, box, look, state.review.decimal);
+  take(id, answer);
+  if (answer.hovered) pointed = cell;
+  // A cell whose column does not list the term is none of the review's until something is typed into it.
+  if (answer.chosen) intent = ChooseCell{fact.listed ? std::optional(cell) : std::nullopt};
+  if (answer.text) {
+    intent = fact.listed ? Intent(EditCell{cell, *answer.text})
+                         : Intent(EditFigure{cell.column, name, cell.key, *answer.text});
+  }
   return id;
 }
 
@@ -146,7 +150,7 @@ float show_headings(TableGrid& grid, float y) {
     look.shown = &heading;
     const CellAnswer answer =
         show_cell(hands, id, column_text(state.document, c, "label"), box, look, state.review.decimal);
-    grid.take(id, answer, nullptr);
+    grid.take(id, answer);
     if (answer.text) grid.intent = EditColumn{c, "label", *answer.text};
     stops.push_back(id);
   }
@@ -186,7 +190,7 @@ float show_headings(TableGrid& grid, float y) {
                       false};
     const CellAnswer answer =
         show_cell(hands, id, column_text(state.document, c, "outcome"), box, {}, state.review.decimal);
-    grid.take(id, answer, nullptr);
+    grid.take(id, answer);
     if (answer.text) grid.intent = EditColumn{c, "outcome", *answer.text};
     outcomes.push_back(id);
   }
@@ -208,7 +212,7 @@ float show_term(TableGrid& grid, int row, float y) {
   const CellAnswer* answer = nullptr;
   CellAnswer store;
   name_cell(grid, name_id, term.name, y, height, answer, store);
-  grid.take(name_id, *answer, nullptr);
+  grid.take(name_id, *answer);
   // An emptied name changes nothing while it is typed; Delete on the name takes the term out.
   const bool emptied = answer->text && answer->text->empty();
   if (answer->text && !(emptied && grid.hands.types_in(name_id))) {
@@ -225,14 +229,9 @@ float show_term(TableGrid& grid, int row, float y) {
   for (int part = 0; part < 2; ++part) {
     for (int c = 0; c < grid.facts.table.columns; ++c) {
       const CellFacts& fact = grid.facts.at(part == 0 ? grid.facts.coefficients : grid.facts.seconds, row, c);
-      if (!fact.listed) {
-        (part == 0 ? upper : lower).push_back("");
-        continue;
-      }
-      const std::string id =
-          "cell/" + std::to_string(c) + "/" + std::to_string(fact.cell.term) + "/" + fact.cell.key;
+      const std::string id = "cell/" + std::to_string(c) + "/" + term.stop + "/" + fact.cell.key;
       (part == 0 ? upper : lower)
-          .push_back(grid.figure(fact, id, part == 0 ? y : y + first, part == 0 ? first : second,
+          .push_back(grid.figure(fact, term.name, id, part == 0 ? y : y + first, part == 0 ? first : second,
                                  part == 0 ? grid.layout.first() : grid.layout.second_type(),
                                  part == 0 ? colours.ink : colours.quiet, part == 1));
     }
@@ -258,7 +257,7 @@ float show_foot(TableGrid& grid, float y) {
     clip_to_figures(grid);
     std::vector<std::string> stops = {""};
     for (int c = 0; c < grid.facts.table.columns; ++c) {
-      stops.push_back(grid.figure(grid.facts.at(grid.facts.foot, row, c),
+      stops.push_back(grid.figure(grid.facts.at(grid.facts.foot, row, c), "",
                                   "cell/" + std::to_string(c) + "/foot/" + foot.key, y, line,
                                   grid.layout.first(), colours.ink, false));
     }

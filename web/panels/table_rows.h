@@ -28,10 +28,11 @@ struct TableGrid {
   CellMove move = {};
   ImVec2 clip_low = {}, clip_high = {};  // of the figures, right of the names
 
-  void take(const std::string& id, const CellAnswer& answer, const TableCell* cell);
-  // Draws a figure in the line that starts at `y`; returns its stop.
-  std::string figure(const CellFacts& fact, const std::string& id, float y, float height, Type type,
-                     ImU32 colour, bool brackets);
+  void take(const std::string& id, const CellAnswer& answer);
+  // Draws a figure of the term called `name` (empty in the foot) in the line that starts at `y`; returns its
+  // stop.
+  std::string figure(const CellFacts& fact, const std::string& name, const std::string& id, float y,
+                     float height, Type type, ImU32 colour, bool brackets);
   // The stop that `move` leads to from where it was asked for; the same one at the table's edge.
   std::string moved_to() const;
 };

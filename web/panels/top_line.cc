@@ -96,13 +96,10 @@ constexpr size_t kAlwaysInMenu = 7;  // of those, the last
 
 void show_status(const AppState& state, float left, float right, float y) {
   const Palette& colours = palette();
-  std::string kept = !keeping_works()    ? "this browser keeps nothing: save the review as a file"
-                     : kept_at().empty() ? "not kept yet"
-                                         : "kept on this machine, " + kept_at();
-  const std::string sent = "nothing is sent";
+  const std::string kept = kept_words();
   // The newest notice first, then what always holds; whatever has no room is left out.
   std::string line;
-  for (const std::string& part : {state.notice, kept, sent}) {
+  for (const std::string& part : {state.notice, kept, std::string(kNothingSent)}) {
     if (part.empty()) continue;
     const std::string longer = line.empty() ? part : line + "  ·  " + part;
     if (left + text_width(Type::Note, longer) > right) continue;
@@ -119,6 +116,11 @@ void show_status(const AppState& state, float left, float right, float y) {
 }
 
 }  // namespace
+
+std::string kept_words() {
+  if (!keeping_works()) return "this browser keeps nothing: save the review as a file";
+  return kept_at().empty() ? "not kept yet" : "kept on this machine, " + kept_at();
+}
 
 float top_line_height() { return px(46); }
 float tabs_height() { return px(40); }

@@ -17,6 +17,10 @@ struct OtherReview {
   std::string name;  // its title and when it was last written
 };
 
+// Whether and when the review was last kept.
+std::string kept_words();
+inline constexpr const char* kNothingSent = "nothing is sent";
+
 float top_line_height();
 Intent show_top_line(const AppState& state, Hands& hands, const std::vector<OtherReview>& others,
                      float width);

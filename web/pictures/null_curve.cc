@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <optional>
 #include <vector>
 
 #include "core/number/number_text.h"
@@ -123,20 +124,26 @@ void draw_null_curve(const Finding& finding, const std::string& as_printed, cons
              {Side::Centre}, {row1});
   labels.keep_free({range_low, row2, range_high, axis});
   const float head = row3 + line / 2;
+  std::optional<Box> reported;
   if (finding.reported) {
     const Interval foot = finding.reported_range.value_or(Interval::point(*finding.reported));
     const float x = x_of(*finding.reported);
     labels.keep_free({x - px(5), head - px(4), x + px(5), axis});
     draw_pin(x_of(foot.low), x_of(foot.high), head, axis, colours.ink);
-    labels.put(Type::Small, reported_text(finding, as_printed), colours.ink, x, px(8),
-               x > critical_x ? std::vector<Side>{Side::Right, Side::Left}
-                              : std::vector<Side>{Side::Left, Side::Right},
-               {head - line / 2, head + line / 2, row2});
+    reported = labels.put(Type::Small, reported_text(finding, as_printed), colours.ink, x, px(8),
+                          x > critical_x ? std::vector<Side>{Side::Right, Side::Left}
+                                         : std::vector<Side>{Side::Left, Side::Right},
+                          {head - line / 2, head + line / 2, row2});
   }
   if (critical_x >= 0) {
     const Box box = labels.put(Type::Small, critical_text(finding), colours.soft, critical_x, px(6),
                                {Side::Left, Side::Right}, {row2, row1, row3, row3 + line});
     draw_critical(critical_x, std::min(box.top + px(2), row2 + px(2)), axis + px(4), colours.ink);
+    // A label that finds no room beside the rule interrupts it.
+    if (reported && reported->left < critical_x && reported->right > critical_x) {
+      list->AddRectFilled(ImVec2(reported->left - px(2), reported->top),
+                          ImVec2(reported->right + px(2), reported->bottom), colours.card);
+    }
   }
   labels.draw();
 

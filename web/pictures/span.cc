@@ -38,36 +38,40 @@ Plan plan_span(const Finding& finding, const std::string& as_printed, const ImVe
   const float critical_x = finding.critical ? x_of(*finding.critical) : -1;
   const float pin_x = finding.reported ? x_of(*finding.reported) : -1;
 
-  // Above: one row where both labels fit beside each other, else the pin's label gets a row of its own.
-  int rows = 1;
-  for (; rows <= 2; ++rows) {
-    plan.axis_y = at.y + static_cast<float>(rows) * line + px(rows == 2 ? kStem - 3 : kStem - 5);
+  // Above: one row where both labels fit beside each other, else two, the pin's label above the other or,
+  // where the pin would cross that one, below it.
+  enum class Rows { One, PinAbove, PinBelow };
+  for (const Rows rows : {Rows::One, Rows::PinAbove, Rows::PinBelow}) {
+    const int count = rows == Rows::One ? 1 : 2;
+    plan.axis_y = at.y + static_cast<float>(count) * line + px(count == 2 ? kStem - 3 : kStem - 5);
     Labels labels(at.x, right);
-    const float lower = at.y + static_cast<float>(rows - 1) * line;
+    const float lower = at.y + static_cast<float>(count - 1) * line;
+    const float rule_top = rows == Rows::PinBelow ? at.y : lower,
+                pin_top = rows == Rows::PinBelow ? lower : at.y;
+    const bool pin_is_right = pin_x > critical_x;
     std::vector<Box> boxes;
-    if (critical_x >= 0) labels.keep_free({critical_x - px(3), lower, critical_x + px(3), plan.axis_y});
-    if (pin_x >= 0) labels.keep_free({pin_x - px(5), at.y, pin_x + px(5), plan.axis_y});
+    if (critical_x >= 0) labels.keep_free({critical_x - px(3), rule_top, critical_x + px(3), plan.axis_y});
+    if (pin_x >= 0) labels.keep_free({pin_x - px(5), pin_top, pin_x + px(5), plan.axis_y});
     if (critical_x >= 0) {
-      const bool pin_is_right = pin_x > critical_x;
       const std::vector<Side> sides = pin_x >= 0 && pin_is_right ? std::vector<Side>{Side::Left, Side::Right}
                                                                  : std::vector<Side>{Side::Right, Side::Left};
-      boxes.push_back(labels.put(Type::Small, critical, colours.soft, critical_x, px(5), sides, {lower}));
+      boxes.push_back(labels.put(Type::Small, critical, colours.soft, critical_x, px(5), sides, {rule_top}));
     }
     if (pin_x >= 0) {
-      const bool pin_is_right = pin_x > critical_x;
       const std::vector<Side> sides = pin_is_right ? std::vector<Side>{Side::Right, Side::Left}
                                                    : std::vector<Side>{Side::Left, Side::Right};
-      boxes.push_back(labels.put(Type::Small, reported, colours.ink, pin_x, px(8), sides, {at.y}));
+      boxes.push_back(labels.put(Type::Small, reported, colours.ink, pin_x, px(8), sides, {pin_top}));
     }
     plan.labels = labels;
-    plan.head_y = at.y + line / 2;
+    plan.head_y = pin_top + line / 2;
     plan.critical_x = critical_x;
-    plan.critical_top = lower + px(1);
+    plan.critical_top = rule_top + px(1);
     const bool clash =
         boxes.size() == 2 &&
         (boxes[0].meets(boxes[1]) ||
-         (boxes[1].left < critical_x + px(2) && boxes[1].right > critical_x - px(2) && rows == 1) ||
-         (boxes[0].left < pin_x + px(4) && boxes[0].right > pin_x - px(4)));
+         (boxes[1].left < critical_x + px(2) && boxes[1].right > critical_x - px(2) &&
+          rows != Rows::PinAbove) ||
+         (boxes[0].left < pin_x + px(4) && boxes[0].right > pin_x - px(4) && rows != Rows::PinBelow));
     if (!clash) break;
   }
   plan.axis_y = snap(plan.axis_y);
