@@ -4,6 +4,8 @@
 #include <cassert>
 #include <cmath>
 
+#include "core/convex/restriction_rows.h"
+
 namespace rejoinder {
 
 AdmissibleSet::AdmissibleSet(int p)
@@ -95,8 +97,10 @@ double distance_outside(const AdmissibleSet& set, const Eigen::VectorXd& b, cons
 double wald_at(const Eigen::MatrixXd& R, const Eigen::VectorXd& r, const Eigen::VectorXd& b,
                const Eigen::MatrixXd& V) {
   const int q = static_cast<int>(R.rows());
-  Eigen::VectorXd d = R * b - r;
-  Eigen::MatrixXd S = R * V * R.transpose();
+  const auto reduced = reduced_rows(V.diagonal().cwiseMax(0).cwiseSqrt(), R, r);
+  const Eigen::MatrixXd& rows = reduced ? reduced->R : R;
+  Eigen::VectorXd d = rows * b - (reduced ? reduced->r : r);
+  Eigen::MatrixXd S = rows * V * rows.transpose();
   for (int i = 0; i < q; ++i) {
     // A row without variance: infinite, unless it is satisfied as it stands and so tells nothing.
     const double scale = std::sqrt(std::max(0.0, S(i, i)));

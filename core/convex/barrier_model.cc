@@ -88,6 +88,18 @@ BarrierModel::BarrierModel(const AdmissibleSet& set, const ConvexFacts& facts, c
     offset_(i) /= length;
     row_mix_.col(i) /= length;
   }
+  // Orthonormal rows for the same hypothesis: rows that resemble one another cost the solver digits.
+  if (rows_ > 1) {
+    const Eigen::MatrixXd upper = R_.transpose().householderQr().matrixQR().topRows(rows_);
+    const auto lower = upper.triangularView<Eigen::Upper>().transpose();  // R_ = lower * orthonormal rows
+    if (upper.diagonal().cwiseAbs().minCoeff() > 1e-10) {
+      lower.solveInPlace(R_);
+      lower.solveInPlace(offset_);
+      Eigen::MatrixXd mix = row_mix_.transpose();
+      lower.solveInPlace(mix);
+      row_mix_ = mix.transpose();
+    }
+  }
   if (rows_ > 0) distance_unit_ = std::max(1e-3, offset_.cwiseAbs().maxCoeff());
   offset_ /= distance_unit_;
 

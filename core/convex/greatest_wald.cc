@@ -217,6 +217,12 @@ GreatestWald greatest_wald(const AdmissibleSet& set, const Eigen::MatrixXd& R, c
     greatest.method = "the restrictions repeat one another";
     return greatest;
   }
+  if (const auto reduced = reduced_rows(convex_facts(set).scale, R, r); reduced && reduced->R != R) {
+    greatest = greatest_wald(set, reduced->R, reduced->r, effort);
+    if (greatest.weights.size() == R.rows())
+      greatest.weights = (reduced->mix.transpose() * greatest.weights).eval();
+    return greatest;
+  }
   if (const auto closed = greatest_wald_of_errors(set, R, r)) return *closed;
   if (const auto closed = greatest_wald_of_capped_exclusion(set, R, r)) return *closed;
   if (set.coefficient_facts.empty())

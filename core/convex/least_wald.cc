@@ -74,6 +74,12 @@ LeastWald least_wald(const AdmissibleSet& set, const Eigen::MatrixXd& R, const E
     return least;
   }
   if (const auto closed = least_wald_of_exclusion(set, R, r)) return *closed;
+  if (const auto reduced = reduced_rows(convex_facts(set).scale, R, r); reduced && reduced->R != R) {
+    least = least_wald(set, reduced->R, reduced->r);
+    if (least.weights.size() == R.rows() && !least.in_ratios)
+      least.weights = (reduced->mix.transpose() * least.weights).eval();
+    return least;
+  }
   const LeastWald from_errors = least_wald_of_errors(set, R, r);
   if (!set.has_covariance_facts() || from_errors.status == LimitStatus::NoCoefficients) return from_errors;
 

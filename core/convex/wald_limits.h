@@ -43,7 +43,8 @@ struct WaldWitness {
 struct LeastWald {
   LimitStatus status = LimitStatus::NotSettled;
   double wald = 0;              // guaranteed: no admissible (b, V) has less; rounded down; may be infinite
-  double attained = kInfinity;  // reached, or approached by admissible V near a singular one
+  double attained = kInfinity;  // reached, or approached near a singular V; of the wider set where
+                                // the set itself is not convex, see witness.outside
   bool exact = false;       // both agree to 1e-8 and the set was used as it is, without a wider one around it
   Eigen::VectorXd weights;  // c, q: the combination of the rows whose t ratio sets the limit
   Eigen::VectorXd

@@ -39,13 +39,15 @@ TEST(OneCorrelation, ExactSetOverABoxIsThatOfAGrid) {
     double low = kInfinity, high = 0;
     for (int a = 0; a <= 40; ++a)
       for (int b = 0; b <= 40; ++b) {
-        const double value = f_at_correlation(t1.low + t1.width() * a / 40, t2.low + t2.width() * b / 40, rho);
+        const double value =
+            f_at_correlation(t1.low + t1.width() * a / 40, t2.low + t2.width() * b / 40, rho);
         low = std::min(low, value);
         high = std::max(high, value);
       }
     bool inside = false;
     for (const Interval& set : sets) inside = inside || set.contains(rho);
-    // The grid is coarse: where it clearly meets the range the set must hold it, where the set leaves it out the grid must too.
+    // The grid is coarse: where it clearly meets the range the set must hold it, where the set leaves it out
+    // the grid must too.
     if (low <= f.high && high >= f.low) {
       EXPECT_TRUE(inside) << rho;
     } else if (low > f.high * 1.02 || high < f.low * 0.98) {
@@ -68,7 +70,8 @@ TEST(RejectingShare, IsTheLengthOfTheIntervalForTwo) {
 
 TEST(RejectingShare, WidensWithRounding) {
   const auto exact = share_rejecting({Interval{1.2, 1.2}, Interval{0.8, 0.8}, Interval{1.5, 1.5}}, {}, 8);
-  const auto rounded = share_rejecting({Interval{1.15, 1.25}, Interval{0.75, 0.85}, Interval{1.45, 1.55}}, {}, 8);
+  const auto rounded =
+      share_rejecting({Interval{1.15, 1.25}, Interval{0.75, 0.85}, Interval{1.45, 1.55}}, {}, 8);
   EXPECT_LT(rounded->low, exact->low);
   EXPECT_GT(rounded->high, exact->high);
 }
