@@ -25,6 +25,16 @@ test('the page is one file of moderate size that tells nothing of where it was b
   assert.ok(!/<(script|link|img)[^>]*(src|href)=/.test(html.replace(/<script>[^]*?<\/script>/g, '')));
 });
 
+test('the policy of the page stands before all scripts and forbids every request', () => {
+  const html = readFileSync(join(pageFolder, kPage), 'utf8');
+  const policy = html.match(/Content-Security-Policy" content="([^"]*)"/)[1];
+  for (const rule of ["default-src 'none'", "connect-src 'none'", "form-action 'none'", "base-uri 'none'"]) {
+    assert.ok(policy.includes(rule), rule);
+  }
+  assert.doesNotMatch(policy, /script-src[^;]*unsafe-inline/);
+  assert.ok(html.indexOf('Content-Security-Policy') < html.indexOf('<script'), 'the policy must come before scripts');
+});
+
 test('the page draws nothing while nothing happens', async (t) => {
   const visit = await t.open(kPage);
   await visit.page.evaluate(() => new Promise((resolve) => setTimeout(resolve, 1500)));
