@@ -57,18 +57,19 @@ class Facts {
       const Interval ratio = Interval::point(1) + m.overall_f->possible * (Interval::point(*m.k) / Interval::point(*m.df));
       add(m, "overall_f", "overall F", *m.overall_f, m.node, kTotal, finite_log(ratio));
     }
-    if (m.ssr) add(m, "ssr", "residual sum of squares", *m.ssr, kUnit, m.node, finite_log(m.ssr->possible));
-    if (m.tss) add(m, "tss", "total sum of squares", *m.tss, kUnit, kTotal, finite_log(m.tss->possible));
+    if (m.ssr) add(m, "ssr", "residual sum of squares", *m.ssr, kUnit, m.node, log_in_units(m.ssr->possible));
+    if (m.tss) add(m, "tss", "total sum of squares", *m.tss, kUnit, kTotal, log_in_units(m.tss->possible));
     if (m.residual_sd && m.df)
       add(m, "residual_sd", "s.e. of the regression", *m.residual_sd, kUnit, m.node,
-          finite_log(Interval::point(*m.df) * square(m.residual_sd->possible)));
+          log_in_units(Interval::point(*m.df) * square(m.residual_sd->possible)));
     if (m.outcome_sd && m.n && m.intercept && !m.total_apart)
       add(m, "outcome_sd", "s.d. of the outcome", *m.outcome_sd, kUnit, kTotal,
-          finite_log(Interval::point(*m.n - 1) * square(m.outcome_sd->possible)));
+          log_in_units(Interval::point(*m.n - 1) * square(m.outcome_sd->possible)));
     if (m.loglik && m.n) {
       // SSR = n exp(-2 ll / n - 1) / (2 pi).
       const Interval exponent = -(Interval::point(2) * m.loglik->possible / Interval::point(*m.n)) - Interval::point(1);
-      const double shift = std::log(*m.n / (2 * kPi));
+      if (unit_ == 0) unit_ = 1;
+      const double shift = std::log(*m.n / (2 * kPi) / unit_);
       add(m, "loglik", "log-likelihood", *m.loglik, kUnit, m.node,
           exponent + Interval{step_down(shift), step_up(shift)});
     }
@@ -85,6 +86,13 @@ class Facts {
   bool speaks_of(int node) const { return count_[node] > 0; }
 
  private:
+  // Logarithms count from a unit near the first sum of squares: those of large numbers would lose the digits that a small
+  // difference of two of them needs. A power of two, so the division is exact.
+  Interval log_in_units(const Interval& x) {
+    if (unit_ == 0) unit_ = x.high > 0 && std::isfinite(x.high) ? std::exp2(std::floor(std::log2(x.high))) : 1;
+    return finite_log({x.low / unit_, x.high / unit_});
+  }
+
   void add(const Model& m, const char* key, const std::string& figure, const PrintedNumber& number, int from, int to,
            const Interval& range) {
     graph_.add({from, to, range, equals(m, figure, number), {{m.id, "", key}}});
@@ -93,6 +101,7 @@ class Facts {
 
   DifferenceGraph& graph_;
   int count_[kNodes] = {};
+  double unit_ = 0;  // 0: none chosen yet
 };
 
 Model model_of(const Column& column, int node) {

@@ -66,7 +66,11 @@ std::string figure_words(const Finding& finding, const Claim& claim) {
     case FigurePart::OutsideLimits:
       break;
   }
-  if (claim.f || claim.chi2) return reported_text(claim) + " lies outside " + range_text(shown(finding));
+  if (claim.f || claim.chi2) {
+    const Interval range = shown(finding);
+    if (std::isinf(range.high)) return reported_text(claim) + " lies below " + number_text(range.low, ShowRounding::Down) + ", the least that the print allows";
+    return reported_text(claim) + " lies outside " + range_text(range);
+  }
   return reported_text(claim) + " lies outside p " + p_range_text(*finding.p);
 }
 

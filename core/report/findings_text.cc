@@ -86,7 +86,7 @@ void write(Page& page, const Finding& f, const TextChoices& choices) {
   for (const Ask& ask : f.ask) page.paragraph("  would settle it  ", ask.figure);
   if (f.state != State::Agrees && !f.paragraph.empty()) page.paragraph("  report     ", f.paragraph);
   if (choices.working)
-    for (const std::string& step : f.working) page.line("  | " + step);
+    for (const std::string& step : f.working) page.paragraph("  | ", step);
 }
 
 }  // namespace
@@ -106,8 +106,8 @@ std::string totals_text(const CheckedReview& checked) {
 
 std::string findings_text(const CheckedReview& checked, const TextChoices& choices) {
   Page page(choices);
-  page.line(checked.title.empty() ? "Review without a title" : checked.title);
-  page.line(totals_text(checked));
+  page.paragraph("", checked.title.empty() ? "Review without a title" : checked.title);
+  page.paragraph("", totals_text(checked));
   for (const Finding& f : checked.findings) write(page, f, choices);
   const bool any_doubt = std::any_of(checked.audit.begin(), checked.audit.end(), [](const AuditLine& a) { return a.match != Match::Fits; });
   if (any_doubt) {

@@ -79,12 +79,12 @@ TEST(HiddenCovariances, FollowFromMeans) {
       }
       const SimulatedRegression regression = fit_regression(X, y);
       std::string text = "[[column]]\nid = \"a\"\nerrors = \"classical\"\nn = 60\nk = " + std::to_string(k) + "\n";
-      text += "[[column.term]]\nname = \"constant\"\nkind = \"intercept\"\ncoef = " + quoted(printed(regression.coefficients(0), 3)) +
-              "\nse = " + quoted(printed(std::sqrt(regression.covariance(0, 0)), 3)) + "\n";
+      text += "[[column.term]]\nname = \"constant\"\nkind = \"intercept\"\ncoef = " + quoted(printed(regression.coefficients(0), 5)) +
+              "\nse = " + quoted(printed(std::sqrt(regression.covariance(0, 0)), 5)) + "\n";
       for (int j = 1; j <= k; ++j)
-        text += term("x" + std::to_string(j), regression.coefficients(j), std::sqrt(regression.covariance(j, j)), 3);
-      std::string means = "[column.means]\noutcome = " + quoted(printed(regression.mean_of_outcome, 2)) + "\n";
-      for (int j = 1; j <= k; ++j) means += "x" + std::to_string(j) + " = " + quoted(printed(regression.means(j - 1), 2)) + "\n";
+        text += term("x" + std::to_string(j), regression.coefficients(j), std::sqrt(regression.covariance(j, j)), 5);
+      std::string means = "[column.means]\noutcome = " + quoted(printed(regression.mean_of_outcome, 4)) + "\n";
+      for (int j = 1; j <= k; ++j) means += "x" + std::to_string(j) + " = " + quoted(printed(regression.means(j - 1), 4)) + "\n";
       const std::string claim = "[[claim]]\nid = \"c\"\ncolumn = \"a\"\nrestrictions = \"constant = 0, x1 = 1\"\n";
       Eigen::MatrixXd R = Eigen::MatrixXd::Zero(2, k + 1);
       R(0, 0) = R(1, 1) = 1;

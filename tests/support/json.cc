@@ -1,6 +1,7 @@
 #include "tests/support/json.h"
 
 #include <cstddef>
+#include <cstdlib>
 
 namespace rejoinder::testing {
 namespace {
@@ -69,18 +70,48 @@ class Reader {
     return value;
   }
 
-  // The reference files hold plain characters, escaped quotes and escaped backslashes; any other escape
-  // stops.
+  // One character after a backslash. Escapes by number are read below U+0080 only: the files hold UTF-8 as it is.
+  bool read_escape(std::string& result) {
+    if (at_ >= text_.size()) return false;
+    const char c = text_[at_++];
+    switch (c) {
+      case '"':
+      case '\\':
+      case '/':
+        result.push_back(c);
+        return true;
+      case 'n':
+        result.push_back('\n');
+        return true;
+      case 't':
+        result.push_back('\t');
+        return true;
+      case 'u': {
+        if (at_ + 4 > text_.size()) return false;
+        const long code = std::strtol(std::string(text_.substr(at_, 4)).c_str(), nullptr, 16);
+        at_ += 4;
+        if (code <= 0 || code >= 0x80) return false;
+        result.push_back(static_cast<char>(code));
+        return true;
+      }
+      default:
+        return false;
+    }
+  }
+
   std::string read_text() {
     std::string result;
     fine_ = fine_ && take('"');
-    while (fine_ && !next_is('"')) {
-      const bool escaped = next_is('\\');
-      if (escaped) ++at_;
-      fine_ = at_ < text_.size() && (!escaped || next_is('"') || next_is('\\') || next_is('/'));
-      if (fine_) result.push_back(text_[at_++]);
+    while (fine_ && at_ < text_.size() && !next_is('"')) {
+      const char c = text_[at_++];
+      if (c == '\\')
+        fine_ = read_escape(result);
+      else
+        result.push_back(c);
     }
-    fine_ = fine_ && take('"');
+    // Not take(): a blank before the closing quote belongs to the text.
+    fine_ = fine_ && next_is('"');
+    if (fine_) ++at_;
     return result;
   }
 
