@@ -6,6 +6,11 @@
 #include "core/convex/barrier_model.h"
 
 namespace rejoinder {
+
+using block::curvature;
+using block::inverse;
+using block::root_of_inverse;
+using block::slope;
 namespace {
 
 double log_determinant(const Eigen::MatrixXd& Z) {

@@ -8,6 +8,9 @@
 
 namespace rejoinder {
 
+using block::inverse;
+using block::slope;
+
 BarrierModel::Dual BarrierModel::dual(const Eigen::VectorXd& x, double tau, const Eigen::VectorXd& dx,
                                       double dtau, double kappa, bool with_border,
                                       const Eigen::VectorXd& objective) const {

@@ -5,7 +5,7 @@
 
 #include <Eigen/Dense>
 
-namespace rejoinder {
+namespace rejoinder::block {
 
 // W with W'W = Z^-1: the inverse of the Cholesky factor.
 inline Eigen::MatrixXd root_of_inverse(const Eigen::MatrixXd& Z) {
@@ -27,4 +27,4 @@ inline double curvature(const Eigen::MatrixXd& P, int i, int j, int k, int l) {
   return weight * (P(i, k) * P(j, l) + P(i, l) * P(j, k));
 }
 
-}  // namespace rejoinder
+}  // namespace rejoinder::block

@@ -42,18 +42,19 @@ struct WaldWitness {
 
 struct LeastWald {
   LimitStatus status = LimitStatus::NotSettled;
-  double wald = 0;              // guaranteed: no admissible (b, V) has less; rounded down; may be infinite
-  double attained = kInfinity;  // reached, or approached near a singular V; of the wider set where
-                                // the set itself is not convex, see witness.outside
-  bool exact = false;       // both agree to 1e-8 and the set was used as it is, without a wider one around it
+  // Guaranteed: no admissible (b, V) has less. Rounded down; may be infinite.
+  double wald = 0;
+  // Reached, or approached near a singular V. Where the set is not convex it belongs to the wider set that
+  // was used: witness.outside tells by how much.
+  double attained = kInfinity;
+  // Both agree to 1e-8 and the set was used as it is, without a wider one around it.
+  bool exact = false;
   Eigen::VectorXd weights;  // c, q: the combination of the rows whose t ratio sets the limit
-  Eigen::VectorXd
-      shifted;  // beta, p: the nearest coefficients that satisfy R beta = r; only from the programme
+  Eigen::VectorXd shifted;  // beta, p: the nearest coefficients with R beta = r; only from the programme
   WaldWitness witness;
-  Multipliers
-      multipliers;  // with `weights`, what guaranteed_wald() needs; empty where the errors alone decide
-  bool in_ratios = false;  // `weights` and `multipliers` belong to ratio_form() of the problem
-  std::string method;      // in words, for the working
+  Multipliers multipliers;  // with `weights`, what guaranteed_wald() needs; empty where errors alone decide
+  bool in_ratios = false;   // `weights` and `multipliers` belong to ratio_form() of the problem
+  std::string method;       // in words, for the working
 };
 
 LeastWald least_wald(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Eigen::VectorXd& r);
