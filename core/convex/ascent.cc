@@ -1,6 +1,5 @@
 #include "core/convex/ascent.h"
 
-#include <algorithm>
 #include <cmath>
 #include <cstdint>
 
@@ -71,15 +70,6 @@ WaldWitness ascend(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Eig
 
 namespace {
 
-// The combinations of the rows, q by count, in which R V R' is smallest against its diagonal.
-Eigen::MatrixXd flattest(const Eigen::MatrixXd& R, const Eigen::MatrixXd& V, int count) {
-  Eigen::MatrixXd S = R * V * R.transpose();
-  const Eigen::VectorXd unit = S.diagonal().cwiseMax(1e-300).cwiseSqrt().cwiseInverse();
-  S = (unit.asDiagonal() * S * unit.asDiagonal()).eval();
-  const Eigen::SelfAdjointEigenSolver<Eigen::MatrixXd> parts(S);
-  return unit.asDiagonal() * parts.eigenvectors().leftCols(count);
-}
-
 // Where l(c) is tiny: takes the combination out of V altogether, in units of standard errors, and sees
 // whether the set allows what is left.
 std::optional<SingularPoint> without_variance(const AdmissibleSet& set, const Eigen::MatrixXd& R,
@@ -127,8 +117,13 @@ std::optional<SingularPoint> singular_point(const AdmissibleSet& set, const Eige
       if (found) return found;
       if (round > 0 && !(relative < 0.7 * last)) break;
       last = relative;
-      c = flattest(R, V, 1).col(0);
-      if (!c.allFinite()) break;
+      // Next: the direction in which R V R' is smallest against its diagonal.
+      Eigen::MatrixXd S = R * V * R.transpose();
+      const Eigen::VectorXd unit = S.diagonal().cwiseMax(1e-300).cwiseSqrt().cwiseInverse();
+      S = (unit.asDiagonal() * S * unit.asDiagonal()).eval();
+      const Eigen::SelfAdjointEigenSolver<Eigen::MatrixXd> parts(S);
+      if (parts.info() != Eigen::Success) break;
+      c = unit.cwiseProduct(parts.eigenvectors().col(0));
     }
     if (!(last < 1e-3)) continue;
     // The search comes to rest at the rim of the combinations without variance; their inside lies between two

@@ -9,12 +9,11 @@
 namespace rejoinder {
 namespace {
 
-constexpr int kStepLimit = 500;    // a phase
+constexpr int kStepLimit = 300;    // a phase
 constexpr double kCentred = 1e-2;  // squared Newton decrement
 constexpr double kGrowth = 12;
-constexpr double kGap = 1e-10;           // relative
-constexpr double kTinyVariance = 1e-12;  // of a functional against its size: smaller ones count as none
-constexpr double kTinyGap = 1e-14;       // in the scaled units, where values are of order one
+constexpr double kGap = 1e-10;      // relative
+constexpr double kTinyGap = 1e-14;  // in the scaled units, where values are of order one
 
 // Newton direction: Cholesky after rows and columns are brought to unit diagonal. False when rounding has
 // left the matrix not positive.
@@ -209,18 +208,13 @@ void Barrier::step() {
       model_->barrier(x_, tau_, with_border()) + kappa_ * (first ? tau_ : objective_value());
   double length = 1;
   if (!(decrement < kCentred)) {
-    // Shorten until lower and well inside. A step that ends at the very edge is lower too, but the way back
-    // from a slack of 1e-20 doubles it at most once a step.
-    const auto merit = [&](double part) {
-      const Eigen::VectorXd x = x_ + part * dx;
-      const double tau = tau_ + part * dtau;
-      return model_->barrier(x, tau, with_border()) + kappa_ * (first ? tau : objective_.dot(x));
-    };
-    const auto accepted = [&](double part) {
-      return merit(part) <= before - 0.1 * part * decrement + 1e-13 * std::fabs(before) &&
-             std::isfinite(model_->barrier(x_ + 1.3 * part * dx, tau_ + 1.3 * part * dtau, with_border()));
-    };
-    for (int halving = 0; !accepted(length); ++halving) {
+    // Backtrack until inside and lower; the first length comes from the self-concordant bound.
+    for (int halving = 0;; ++halving) {
+      const Eigen::VectorXd x = x_ + length * dx;
+      const double tau = tau_ + length * dtau;
+      const double after =
+          model_->barrier(x, tau, with_border()) + kappa_ * (first ? tau : objective_.dot(x));
+      if (after <= before - 0.1 * length * decrement + 1e-13 * std::fabs(before)) break;
       length /= 2;
       if (halving > 40) {
         length = 0;
@@ -265,7 +259,7 @@ void Barrier::step() {
     }
     return;
   }
-  if (gap <= std::max(kGap * std::fabs(objective_value()) / 2, wald_ ? kTinyGap : kTinyVariance)) {
+  if (gap <= std::max(kGap * std::fabs(objective_value()) / 2, kTinyGap)) {
     state_ = State::Settled;
     return;
   }

@@ -45,7 +45,6 @@ class Barrier {
   void run();
   State state() const { return state_; }
   int steps() const { return steps_; }
-  int unknowns() const { return model_->unknowns(); }
 
   // For a barrier made without rows, once done(): a new objective, starting from the interior point already
   // found. `T` is p by p and symmetric, without weight on coefficients whose variance nothing bounds.

@@ -80,7 +80,7 @@ WaldWitness with_errors_held(const AdmissibleSet& set, const Eigen::MatrixXd& R,
 // Where correlation ranges and rounded standard errors make the set not convex: one standard error after the
 // other is moved to its other end while that raises W.
 WaldWitness over_errors(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Eigen::VectorXd& r,
-                        const GreatestEffort& effort, int calls_in_all) {
+                        const GreatestEffort& effort) {
   Eigen::VectorXd s = (set.se_low + set.se_high) / 2;
   const int calls = 12;
   WaldWitness best = with_errors_held(set, R, r, s, effort, calls);
@@ -89,7 +89,7 @@ WaldWitness over_errors(const AdmissibleSet& set, const Eigen::MatrixXd& R, cons
     for (int j = 0; j < set.size(); ++j) {
       if (R.col(j).isZero(0) || set.se_low(j) == set.se_high(j)) continue;
       for (const double end : {set.se_low(j), set.se_high(j)}) {
-        if (s(j) == end || end == 0 || (calls_in_all -= calls) < 0) continue;
+        if (s(j) == end || end == 0) continue;
         Eigen::VectorXd tried = s;
         tried(j) = end;
         const WaldWitness now = with_errors_held(set, R, r, tried, effort, calls);
@@ -181,14 +181,13 @@ GreatestWald search(const AdmissibleSet& set, const Eigen::MatrixXd& R, const Ei
     greatest.attained = climbed.wald;
   }
   if (!widened && !facts.exact) {
-    const WaldWitness held = over_errors(set, R, r, effort, variance.calls_within(1));
+    const WaldWitness held = over_errors(set, R, r, effort);
     if (held.wald > greatest.attained && distance_outside(set, held.b, held.V) <= 1e-9) {
       greatest.witness = held;
       greatest.attained = held.wald;
     }
   }
-  // Where W is already beyond any use there is most likely no limit, and no bound to be found.
-  if (!widened && q <= 4 && greatest.attained < 1e7) {
+  if (!widened && q <= 4) {
     // Over a wider convex set the bound still holds, but there is no use in closing its last digits.
     const ConeSearch cones = search_cones(
         inner, R, r, variance, greatest.attained, facts.exact ? effort.agreement : 1e-3,

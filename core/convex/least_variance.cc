@@ -26,11 +26,11 @@ LeastVariance::Answer LeastVariance::between(const Eigen::VectorXd& a, const Eig
 }
 
 int LeastVariance::calls_within(double seconds) const {
-  const double unknowns = barrier_.unknowns();
+  const double p = static_cast<double>(interior_.rows()), unknowns = p * (p + 1) / 2;
   // About 60 steps a call, each a factorisation and an assembly of the Hessian; a billion such operations a
   // second.
   const double work = 60 * (unknowns * unknowns * unknowns / 3 + 15 * unknowns * unknowns + 3000);
-  return static_cast<int>(std::clamp(seconds * 1e9 / work, 4.0, 5000.0));
+  return static_cast<int>(std::clamp(seconds * 1e9 / work, 12.0, 5000.0));
 }
 
 }  // namespace rejoinder
